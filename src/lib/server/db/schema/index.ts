@@ -1,0 +1,7 @@
+export * from './catalog';
+export * from './jobs';
+export * from './mail';
+export * from './metal';
+export * from './orders';
+export * from './people';
+export * from './plans';
