@@ -10,7 +10,6 @@ import {
 import type { EndKind, JointChoice, RunEnd } from '../../../domain/takeoff/takeoff';
 import {
 	createdAt,
-	flagColumn,
 	idColumn,
 	jsonColumn,
 	lengthColumn,

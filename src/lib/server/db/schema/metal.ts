@@ -18,7 +18,10 @@ const shopId = () =>
 		.references(() => shops.id);
 const pairKeys = (t: { shopId: never; profileId: never; materialId: never }) =>
 	[
-		foreignKey({ columns: [t.shopId, t.profileId], foreignColumns: [profiles.shopId, profiles.id] }),
+		foreignKey({
+			columns: [t.shopId, t.profileId],
+			foreignColumns: [profiles.shopId, profiles.id]
+		}),
 		foreignKey({
 			columns: [t.shopId, t.materialId],
 			foreignColumns: [materials.shopId, materials.id]
@@ -77,7 +80,10 @@ export const claims = sqliteTable(
 	(t) => [
 		uniqueIndex('claims_stick').on(t.stickId),
 		foreignKey({ columns: [t.shopId, t.metalId], foreignColumns: [metal.shopId, metal.id] }),
-		foreignKey({ columns: [t.shopId, t.releaseId], foreignColumns: [releases.shopId, releases.id] }),
+		foreignKey({
+			columns: [t.shopId, t.releaseId],
+			foreignColumns: [releases.shopId, releases.id]
+		}),
 		foreignKey({
 			columns: [t.shopId, t.stickId],
 			foreignColumns: [plannedSticks.shopId, plannedSticks.id]

@@ -103,7 +103,10 @@ export const receiptLines = sqliteTable(
 	},
 	(t) => [
 		index('receipt_lines_line').on(t.shopId, t.orderLineId),
-		foreignKey({ columns: [t.shopId, t.receiptId], foreignColumns: [receipts.shopId, receipts.id] }),
+		foreignKey({
+			columns: [t.shopId, t.receiptId],
+			foreignColumns: [receipts.shopId, receipts.id]
+		}),
 		foreignKey({
 			columns: [t.shopId, t.orderLineId],
 			foreignColumns: [orderLines.shopId, orderLines.id]

@@ -15,7 +15,14 @@ import type {
 	Verdict
 } from '../../../domain/plan/plan';
 import type { PieceKind, RunEnd } from '../../../domain/takeoff/takeoff';
-import { createdAt, idColumn, jsonColumn, lengthColumn, timeColumn, versionColumn } from '../columns';
+import {
+	createdAt,
+	idColumn,
+	jsonColumn,
+	lengthColumn,
+	timeColumn,
+	versionColumn
+} from '../columns';
 import { materials, profiles } from './catalog';
 import { jobs } from './jobs';
 import { shops } from './people';
@@ -157,7 +164,10 @@ export const planGroups = sqliteTable(
 	(t) => [
 		unique('plan_groups_owner').on(t.shopId, t.id),
 		foreignKey({ columns: [t.shopId, t.planId], foreignColumns: [plans.shopId, plans.id] }),
-		foreignKey({ columns: [t.shopId, t.profileId], foreignColumns: [profiles.shopId, profiles.id] }),
+		foreignKey({
+			columns: [t.shopId, t.profileId],
+			foreignColumns: [profiles.shopId, profiles.id]
+		}),
 		foreignKey({
 			columns: [t.shopId, t.materialId],
 			foreignColumns: [materials.shopId, materials.id]
@@ -267,7 +277,10 @@ export const releasedPieces = sqliteTable(
 	(t) => [
 		index('released_pieces_job').on(t.shopId, t.jobId, t.mark),
 		uniqueIndex('released_pieces_once').on(t.releaseId, t.pieceId, t.change),
-		foreignKey({ columns: [t.shopId, t.releaseId], foreignColumns: [releases.shopId, releases.id] }),
+		foreignKey({
+			columns: [t.shopId, t.releaseId],
+			foreignColumns: [releases.shopId, releases.id]
+		}),
 		foreignKey({ columns: [t.shopId, t.pieceId], foreignColumns: [pieces.shopId, pieces.id] })
 	]
 );
@@ -305,4 +318,3 @@ export const pieceSteps = sqliteTable(
 		foreignKey({ columns: [t.shopId, t.pieceId], foreignColumns: [pieces.shopId, pieces.id] })
 	]
 );
-

@@ -1,0 +1,28 @@
+import type { z } from 'zod';
+import type { FieldProblem } from './problem';
+import { zodProblems } from './read-json';
+
+export type FormRead<T> =
+	{ ok: true; value: T } | { ok: false; problems: FieldProblem[]; entered: Record<string, string> };
+
+/** What was typed, so that it can be shown again; files and passwords are left out. */
+function enteredText(form: FormData): Record<string, string> {
+	const entered: Record<string, string> = {};
+	for (const [key, value] of form)
+		if (typeof value === 'string' && !/password/i.test(key)) entered[key] = value;
+	return entered;
+}
+
+/** A posted form checked by a schema; a field named `name[]` becomes the array `name`. */
+export async function readForm<S extends z.ZodType>(
+	request: Request,
+	schema: S
+): Promise<FormRead<z.output<S>>> {
+	const form = await request.formData();
+	const body: Record<string, unknown> = {};
+	for (const key of new Set(form.keys()))
+		body[key.replace(/\[\]$/, '')] = key.endsWith('[]') ? form.getAll(key) : form.get(key);
+	const parsed = schema.safeParse(body);
+	if (parsed.success) return { ok: true, value: parsed.data };
+	return { ok: false, problems: zodProblems(parsed.error, body), entered: enteredText(form) };
+}
