@@ -31,7 +31,8 @@ const ACCEPTED: Readonly<Record<Refusal['kind'], (reading: LengthReading) => str
 			? 'a fraction or feet and inches with their unit, such as 3/4 in'
 			: 'one number with its unit, or feet and inches with their marks',
 	'not-a-tape-fraction': () => 'a fraction of a tape: halves, 4ths, 8ths, 16ths, 32nds or 64ths',
-	'part-too-large': () => 'each part smaller than one of the unit before it, as 11 inches after feet',
+	'part-too-large': () =>
+		'each part smaller than one of the unit before it, as 11 inches after feet',
 	comma: () => 'a point before decimals and no mark between thousands',
 	'too-fine': () => 'at most 5 decimals of an inch or 6 of a millimetre',
 	absurd: () => 'a length up to 1 km',

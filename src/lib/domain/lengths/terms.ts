@@ -115,7 +115,8 @@ function isFeetDash(term: RawTerm, next: RawTerm, units: LengthReading['units'])
 }
 
 function valueOf(term: SettledTerm, reading: LengthReading): Refusal | { value: Fraction } {
-	const whole = term.number === null ? new Fraction(0) : readNumber(term.number, term.unit, reading);
+	const whole =
+		term.number === null ? new Fraction(0) : readNumber(term.number, term.unit, reading);
 	if ('kind' in whole) return whole;
 	if (!term.fraction) return { value: whole };
 	if (term.number !== null && !/^\d+$/.test(term.number)) return { kind: 'malformed' };

@@ -1,0 +1,5 @@
+import { ensureChromium } from './ensure-chromium.mjs';
+
+export default function globalSetup(): void {
+	ensureChromium();
+}
