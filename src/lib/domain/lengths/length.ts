@@ -24,6 +24,8 @@ export const INCH = length(25_400_000);
 export const FOOT = length(304_800_000);
 export const SIXTEENTH = length(1_587_500);
 export const SIXTY_FOURTH = length(396_875);
+/** One kilometre: no run, stick or coil of the trade comes near it; anything longer is a slip of the pen. */
+export const LONGEST_LENGTH = length(1_000_000_000_000);
 
 export const add = (...parts: readonly Length[]): Length =>
 	length(parts.reduce<number>((sum, part) => sum + part, 0));

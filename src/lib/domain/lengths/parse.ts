@@ -16,7 +16,7 @@
  */
 import Fraction from 'fraction.js';
 import { fail, ok, type Problem, type Result } from '../result';
-import { length, type Length } from './length';
+import { LONGEST_LENGTH, length, type Length } from './length';
 import type { LengthReading } from './reading';
 import { describeRefusal, type Refusal } from './refusals';
 import { readTerms, type Term } from './terms';
@@ -24,9 +24,6 @@ import { LONGEST_TEXT, plainText, tokenise } from './tokens';
 import type { UnitSystem } from './units';
 
 export type { LengthReading } from './reading';
-
-/** One kilometre: no run, stick or coil of the trade comes near it. */
-export const LONGEST_LENGTH = length(1_000_000_000_000);
 
 /**
  * Returns the exact length that a person typed, or a problem that names the field, what was read and what

@@ -1,4 +1,5 @@
 import type { Length } from '../lengths/length';
+import type { UnitSystem } from '../lengths/units';
 import type { Closure, EndKind } from '../profiles/ends';
 
 export { CLOSURES, END_KINDS, type Closure, type EndKind } from '../profiles/ends';
@@ -47,6 +48,12 @@ export interface RunToDivide {
 	readonly keepOut: readonly (readonly [Length, Length])[];
 	/** `between`: both ends fit between things, a single piece rounds down; `over`: it rounds up. */
 	readonly fit: 'between' | 'over';
+	/** Which piece lies on top at a lap, seen from outside; `left` unless said otherwise. */
+	readonly lapOver?: 'left' | 'right';
+	/** `never`: one piece or none; `allowed` unless said otherwise. */
+	readonly joints?: 'allowed' | 'never';
+	/** System of the sentences about this run; `imperial` unless said otherwise. */
+	readonly units?: UnitSystem;
 }
 
 export type PieceKind = 'run' | 'return' | 'corner' | 'plate' | 'cover' | 'spare';
@@ -82,7 +89,10 @@ export interface DividedRun {
 	readonly total: Length;
 	readonly pieceLimit: Length;
 	readonly governs: LimitKind;
-	/** The rounding rest e < q: the last lap is longer, or the last gap smaller, by this much. */
+	/**
+	 * The rounding rest e < q. In a divided run the last lap is longer, or the last gap smaller, by this
+	 * much; a single piece is longer than the total (`over`) or shorter (`between`) by it.
+	 */
 	readonly rest: Length;
 	readonly caps: number;
 	/** Splice plates as pieces of their own are counted here; their length is the joint's plate length. */
