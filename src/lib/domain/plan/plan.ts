@@ -67,6 +67,8 @@ export type PlanStatus = 'proven' | 'best found' | 'impossible' | 'stopped';
  */
 export interface DualCertificate {
 	readonly K: number;
+	/** The numerator Σ demand·u − Σ available·w, stated so that a change of any one number shows. */
+	readonly total: number;
 	readonly u: readonly { readonly length: Length; readonly value: number }[];
 	readonly w: readonly { readonly id: string; readonly value: number }[];
 }

@@ -1,0 +1,99 @@
+import type { DualCertificate } from '../plan/plan';
+import { Knapsack } from './knapsack';
+import { totalDemand, type Model } from './model';
+
+/** A bound proven in whole numbers, and the certificate that another program can recheck. */
+export interface ProvenBound {
+	readonly costCents: number;
+	readonly certificate: DualCertificate;
+}
+
+/** Certificate values stay below this, so that every sum of the table is an exact double. */
+const EXACT = 2 ** 51;
+
+/**
+ * Makes any prices u ≥ 0 of the items into a valid integer certificate (SOLVER.md 3.4): round the
+ * prices down to whole numbers, take V_s = best value of one pattern of bin s from the exact table,
+ * and K = the least whole number with V_s ≤ K·c_s for every unlimited bin. Then
+ * cost ≥ (Σ d·u − Σ b_s·w_s)/K with w_s = max(0, V_s − K·c_s) where bin s is limited.
+ */
+export function certify(model: Model, prices: ArrayLike<number>, table: Knapsack): ProvenBound {
+	const u = wholePrices(model, prices);
+	const values = table.fill(
+		u,
+		model.items.map((item) => item.demand)
+	);
+	const K = divisor(model, values);
+	const w = model.bins.map((bin, s) =>
+		bin.limit === Infinity ? 0 : Math.max(0, values[s]! - K * bin.cost)
+	);
+	const total = numerator(model, u, w);
+	if (total <= 0n || total > BigInt(Number.MAX_SAFE_INTEGER)) return nothingProven(model);
+	return { costCents: roundUp(model, total, K), certificate: toCertificate(model, u, w, K, total) };
+}
+
+/** Prices proportional to size: the material bound, the simplest certificate there is. */
+export const materialPrices = (model: Model): number[] => model.items.map((item) => item.coarse);
+
+function wholePrices(model: Model, prices: ArrayLike<number>): number[] {
+	const free = freeCapacity(model);
+	const u = model.items.map((item, i) => (item.size <= free ? 0 : Math.max(0, prices[i]!)));
+	const total = u.reduce((sum, value, i) => sum + value * model.items[i]!.demand, 0);
+	if (!(total > 0) || !Number.isFinite(total)) return u.map(() => 0);
+	const scale = (EXACT - totalDemand(model)) / total;
+	const whole = u.every((value) => Number.isInteger(value)) && scale >= 1;
+	return whole ? u : u.map((value) => Math.floor(value * scale));
+}
+
+/** The largest capacity that unlimited stock gives away: what fits in it can have no price. */
+const freeCapacity = (model: Model): number =>
+	Math.max(
+		-1,
+		...model.bins.filter((bin) => bin.cost === 0 && bin.limit === Infinity).map((b) => b.capacity)
+	);
+
+function divisor(model: Model, values: Float64Array): number {
+	let K = 1;
+	model.bins.forEach((bin, s) => {
+		if (bin.limit === Infinity && bin.cost > 0) K = Math.max(K, Math.ceil(values[s]! / bin.cost));
+	});
+	return K;
+}
+
+function numerator(model: Model, u: readonly number[], w: readonly number[]): bigint {
+	let sum = 0n;
+	model.items.forEach((item, i) => (sum += BigInt(item.demand) * BigInt(u[i]!)));
+	model.bins.forEach((bin, s) => {
+		if (w[s]! > 0) sum -= BigInt(bin.limit) * BigInt(w[s]!);
+	});
+	return sum;
+}
+
+/** total / K, rounded up to the common step of the prices. */
+function roundUp(model: Model, total: bigint, K: number): number {
+	const unit = BigInt(K) * BigInt(model.step);
+	return Number((total + unit - 1n) / unit) * model.step;
+}
+
+/** The certificate of the bound 0, which needs no prices. */
+function nothingProven(model: Model): ProvenBound {
+	const u = model.items.map((item) => ({ length: item.length, value: 0 }));
+	return { costCents: 0, certificate: { K: 1, total: 0, u, w: [] } };
+}
+
+function toCertificate(
+	model: Model,
+	u: readonly number[],
+	w: readonly number[],
+	K: number,
+	total: bigint
+): DualCertificate {
+	return {
+		K,
+		total: Number(total),
+		u: model.items.map((item, i) => ({ length: item.length, value: u[i]! })),
+		w: model.bins.flatMap((bin, s) =>
+			w[s]! > 0 ? bin.sources.map((source) => ({ id: source.id, value: w[s]! })) : []
+		)
+	};
+}
