@@ -19,6 +19,11 @@ export interface Hem {
 /** Cross-section of a trim: legs with turns, hems at either edge, inside radius, finished side. */
 export interface ProfileShape {
 	readonly legs: readonly Leg[];
+	/**
+	 * Direction of the first leg when drawn with the wall at the left: hundredths of a degree
+	 * counter-clockwise from "to the right"; 0 unless said otherwise.
+	 */
+	readonly heading?: number;
 	readonly startHem: Hem | null;
 	readonly endHem: Hem | null;
 	readonly insideRadius: Length;
