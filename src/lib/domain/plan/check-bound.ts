@@ -39,7 +39,8 @@ export function checkCertificate(
 	const values = patternValues(problem, lengths, demand, prices, limits);
 	checkWeights(certificate.K, limits, values, weights, faults);
 	const total = numerator(demand, prices, limits, weights);
-	if (total !== BigInt(certificate.total)) faults.push('The total of the certificate does not add up.');
+	if (total !== BigInt(certificate.total))
+		faults.push('The total of the certificate does not add up.');
 	if (faults.length > 0) return { costCents: null, faults };
 	return { costCents: roundedUp(problem, total, certificate.K), faults };
 }

@@ -58,7 +58,8 @@ function checkStick(
 	faults: string[]
 ): void {
 	const source = findSource(problem, stick.source);
-	if (!source) return void faults.push(`${name} is cut from ${stick.source.id}, which is not there.`);
+	if (!source)
+		return void faults.push(`${name} is cut from ${stick.source.id}, which is not there.`);
 	if (stick.nominal !== source.nominal || stick.usable !== source.usable) {
 		faults.push(`${name} does not have the length of ${stick.source.id}.`);
 	}

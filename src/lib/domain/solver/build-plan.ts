@@ -81,12 +81,7 @@ export function noPlan(
 	impossible: readonly Impossible[],
 	proven: ProvenBound | null = null
 ): PackingPlan {
-	const bound = planBound(
-		problem,
-		proven?.costCents ?? 0,
-		proven ? 'certificate' : 'none',
-		proven
-	);
+	const bound = planBound(problem, proven?.costCents ?? 0, proven ? 'certificate' : 'none', proven);
 	return { status, sticks: [], costCents: 0, bound, impossible };
 }
 

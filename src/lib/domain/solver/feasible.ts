@@ -31,9 +31,7 @@ export function findImpossible(problem: PackingProblem): Impossible[] {
 	const tooLong = wanted.filter((piece) => piece.length > longest);
 	if (tooLong.length > 0) {
 		const remedy = 'add a longer stock length, or divide the piece by a joint';
-		return tooLong.map((piece) =>
-			obstacle(piece, 'longest-stock', piece.length, longest, remedy)
-		);
+		return tooLong.map((piece) => obstacle(piece, 'longest-stock', piece.length, longest, remedy));
 	}
 	return tooFew(problem, sticks);
 }

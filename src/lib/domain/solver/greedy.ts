@@ -20,7 +20,11 @@ export interface GreedyRule {
  * First- or best-fit-decreasing over item demands, then every length exchanged for the cheapest that
  * still holds its cut. Returns null when limited stock ran out before all pieces were placed.
  */
-export function packGreedy(model: Model, demand: ArrayLike<number>, rule: GreedyRule): Use[] | null {
+export function packGreedy(
+	model: Model,
+	demand: ArrayLike<number>,
+	rule: GreedyRule
+): Use[] | null {
 	const left = model.bins.map((bin) => bin.limit);
 	const open: Open[] = [];
 	const rest = Array.from(demand);
@@ -160,4 +164,3 @@ function toUses(open: readonly Open[]): Use[] {
 		return { pattern: { bin: one.bin, items, counts }, times: 1 };
 	});
 }
-

@@ -87,7 +87,10 @@ export class Knapsack {
 		for (const i of this.#small) {
 			if (!(this.#values[i]! > 0)) continue;
 			const size = this.#model.items[i]!.coarse;
-			let left = Math.min(this.#demand[i]!, size > 0 ? Math.floor(this.#capacity / size) : Infinity);
+			let left = Math.min(
+				this.#demand[i]!,
+				size > 0 ? Math.floor(this.#capacity / size) : Infinity
+			);
 			for (let copies = 1; left > 0; copies *= 2) {
 				const now = Math.min(copies, left);
 				rows.push({ item: i, copies: now, size: now * size });

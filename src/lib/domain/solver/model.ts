@@ -8,7 +8,11 @@ export interface Item {
 	/** `size` on the coarser grid of the knapsack table, rounded down. */
 	readonly coarse: number;
 	readonly demand: number;
-	readonly pieces: readonly { readonly id: string; readonly mark: string; readonly count: number }[];
+	readonly pieces: readonly {
+		readonly id: string;
+		readonly mark: string;
+		readonly count: number;
+	}[];
 }
 
 /** One stick that a pattern can be cut from. */
@@ -148,7 +152,9 @@ type SizedBin = Omit<Bin, 'coarse'>;
 /** Leaves out bins that hold no piece, and those that an unlimited bin beats in room and price. */
 function dropUseless(bins: readonly SizedBin[], smallest: number): SizedBin[] {
 	const holding = bins.filter((bin) => bin.capacity >= smallest && bin.limit > 0);
-	return holding.filter((bin, i) => !holding.some((other, j) => i !== j && beats(other, bin, j < i)));
+	return holding.filter(
+		(bin, i) => !holding.some((other, j) => i !== j && beats(other, bin, j < i))
+	);
 }
 
 function beats(a: SizedBin, b: SizedBin, first: boolean): boolean {
