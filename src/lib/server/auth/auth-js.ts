@@ -60,11 +60,7 @@ const auth = SvelteKitAuth(async (event) => {
 				if (trigger !== 'signIn' || !user?.id) return token;
 				const { shopId } = user as { shopId: string };
 				const userAgent = event.request.headers.get('user-agent') ?? '';
-				const sid = startSession(
-					getDatabase(),
-					{ userId: user.id, shopId, userAgent },
-					Date.now()
-				);
+				const sid = startSession(getDatabase(), { userId: user.id, shopId, userAgent }, Date.now());
 				return { sub: user.id, sid };
 			}
 		}
@@ -122,6 +118,7 @@ export async function signOut(event: RequestEvent): Promise<void> {
 
 /** Auth.js also remembers a return address, which this product does not use. */
 function dropLeftovers(event: RequestEvent): void {
-	for (const name of ['authjs.callback-url', '__Secure-authjs.callback-url'])
-		event.cookies.delete(name, { path: '/', secure: name.startsWith('__') });
+	const { secure } = sessionCookie(event.url).options;
+	const name = `${secure ? '__Secure-' : ''}authjs.callback-url`;
+	event.cookies.delete(name, { path: '/', secure });
 }

@@ -45,9 +45,7 @@ export function findSession(db: Queryable, id: string): SessionRow | null {
 		.where(eq(sessions.id, id))
 		.all();
 	const first = rows[0];
-	if (!first) return null;
-	const { role: _, ...row } = first;
-	return { ...row, roles: rows.flatMap((each) => each.role ?? []) };
+	return first ? { ...first, roles: rows.flatMap((row) => row.role ?? []) } : null;
 }
 
 export function touchSession(db: Queryable, id: string, now: number): void {
@@ -62,12 +60,7 @@ export function revokeSession(db: Queryable, id: string, now: number): void {
 }
 
 /** Ends one session of this person only; false when it is not theirs or already over. */
-export function revokeOwnSession(
-	db: Queryable,
-	userId: string,
-	id: string,
-	now: number
-): boolean {
+export function revokeOwnSession(db: Queryable, userId: string, id: string, now: number): boolean {
 	const done = db
 		.update(sessions)
 		.set({ revokedAt: now })

@@ -15,7 +15,8 @@ export type SignIn =
 	| { readonly ok: true; readonly userId: string; readonly shopId: string }
 	| { readonly ok: false; readonly sentence: string };
 
-const WRONG = 'E-mail and password: this pair was not recognised; accepted is the address and password of a person of a shop.';
+const WRONG =
+	'E-mail and password: this pair was not recognised; accepted is the address and password of a person of a shop.';
 
 const refuse = (sentence: string): SignIn => ({ ok: false, sentence });
 
