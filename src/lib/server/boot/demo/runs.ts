@@ -44,8 +44,24 @@ export const DEMO_ELEVATIONS: readonly DemoElevation[] = [
 		wallLine: `47'-9 1/2"`,
 		wallVerified: true,
 		canopies: [
-			canopy('K1', 'Canopy at the main door', `18'-6 3/8"`, `4'-0"`, `4'-0 1/16"`, `3'-11 15/16"`, `18'-10 3/8"`),
-			canopy('K2', 'Canopy at the bookshop', `14'-7 3/4"`, `4'-0"`, `4'-0 1/8"`, `4'-0"`, `14'-11 3/4"`)
+			canopy(
+				'K1',
+				'Canopy at the main door',
+				`18'-6 3/8"`,
+				`4'-0"`,
+				`4'-0 1/16"`,
+				`3'-11 15/16"`,
+				`18'-10 3/8"`
+			),
+			canopy(
+				'K2',
+				'Canopy at the bookshop',
+				`14'-7 3/4"`,
+				`4'-0"`,
+				`4'-0 1/8"`,
+				`4'-0"`,
+				`14'-11 3/4"`
+			)
 		]
 	},
 	{
@@ -55,8 +71,24 @@ export const DEMO_ELEVATIONS: readonly DemoElevation[] = [
 		wallLine: `33'-2 7/8"`,
 		wallVerified: true,
 		canopies: [
-			canopy('K3', 'Canopy at the café', `22'-3 1/4"`, `5'-0"`, `5'-0 3/16"`, `4'-11 7/8"`, `22'-7 1/4"`),
-			canopy('K4', 'Awning at the stair', `8'-9 5/16"`, `3'-6"`, `3'-6 1/16"`, `3'-6"`, `9'-1 5/16"`)
+			canopy(
+				'K3',
+				'Canopy at the café',
+				`22'-3 1/4"`,
+				`5'-0"`,
+				`5'-0 3/16"`,
+				`4'-11 7/8"`,
+				`22'-7 1/4"`
+			),
+			canopy(
+				'K4',
+				'Awning at the stair',
+				`8'-9 5/16"`,
+				`3'-6"`,
+				`3'-6 1/16"`,
+				`3'-6"`,
+				`9'-1 5/16"`
+			)
 		]
 	},
 	{
@@ -66,9 +98,25 @@ export const DEMO_ELEVATIONS: readonly DemoElevation[] = [
 		wallLine: `52'-0 3/16"`,
 		wallVerified: false,
 		canopies: [
-			canopy('K5', 'Canopy at dock 1', `26'-4 1/2"`, `6'-0"`, `6'-0 1/4"`, `6'-0 1/8"`, `26'-8 1/2"`),
+			canopy(
+				'K5',
+				'Canopy at dock 1',
+				`26'-4 1/2"`,
+				`6'-0"`,
+				`6'-0 1/4"`,
+				`6'-0 1/8"`,
+				`26'-8 1/2"`
+			),
 			{
-				...canopy('K6', 'Canopy at dock 2', `26'-5 1/16"`, `6'-0"`, `6'-0"`, `6'-0 3/16"`, `26'-9 1/16"`),
+				...canopy(
+					'K6',
+					'Canopy at dock 2',
+					`26'-5 1/16"`,
+					`6'-0"`,
+					`6'-0"`,
+					`6'-0 3/16"`,
+					`26'-9 1/16"`
+				),
 				verified: false
 			}
 		]
@@ -80,8 +128,24 @@ export const DEMO_ELEVATIONS: readonly DemoElevation[] = [
 		wallLine: `38'-11 3/4"`,
 		wallVerified: true,
 		canopies: [
-			canopy('K7', 'Canopy at the lift', `11'-2 1/8"`, `4'-6"`, `4'-6 1/16"`, `4'-6"`, `11'-6 1/8"`),
-			canopy('K8', 'Canopy at the workshops', `31'-8 5/8"`, `4'-6"`, `4'-6"`, `4'-6 1/8"`, `32'-0 5/8"`)
+			canopy(
+				'K7',
+				'Canopy at the lift',
+				`11'-2 1/8"`,
+				`4'-6"`,
+				`4'-6 1/16"`,
+				`4'-6"`,
+				`11'-6 1/8"`
+			),
+			canopy(
+				'K8',
+				'Canopy at the workshops',
+				`31'-8 5/8"`,
+				`4'-6"`,
+				`4'-6"`,
+				`4'-6 1/8"`,
+				`32'-0 5/8"`
+			)
 		]
 	}
 ];
