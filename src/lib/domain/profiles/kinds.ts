@@ -1,67 +1,18 @@
-import { INCH, inches, length, type Length } from '../lengths/length';
+import { inches, type Length } from '../lengths/length';
+import {
+	eighths,
+	shape,
+	dimension,
+	FACE,
+	KICK,
+	HEM,
+	FOLDS_BACK,
+	NOT_CLOSED,
+	type ProfileKind
+} from './kind';
 import type { ProfileShape } from './profile';
 
-/** A dimension of a trade kind that a shop sets. */
-export interface KindDimension {
-	readonly key: string;
-	readonly label: string;
-	readonly standard: Length;
-}
-
-/** How an end of this kind is closed from its own metal. */
-export interface Closing {
-	/** Name of the leg that is lengthened and folds; empty when the kind is never closed. */
-	readonly leg: string;
-	readonly by: 'folds-back' | 'folds-down' | 'dam' | 'none';
-	/** Legs hidden behind the wall or deck, which a fold need not cover. */
-	readonly hidden: readonly string[];
-}
-
-export interface ProfileKind {
-	readonly kind: string;
-	readonly purpose: string;
-	readonly dimensions: readonly KindDimension[];
-	readonly build: (dimensions: Readonly<Record<string, Length>>) => ProfileShape;
-	readonly closing: Closing;
-	readonly joint: 'lap' | 'plate';
-	readonly lap: Length;
-	readonly concealed: boolean;
-}
-
-const eighths = (count: number): Length => length((INCH / 8) * count);
-const HALF = eighths(4);
-
-type LegSpec = readonly [name: string, length: Length, turn: number];
-
-/** Wall at the left, finish on the outside: walking the legs, the finished side is on the left hand. */
-function shape(
-	heading: number,
-	legs: readonly LegSpec[],
-	hems: { readonly start?: Length; readonly end?: Length } = {}
-): ProfileShape {
-	const hem = (width: Length | undefined) => (width ? ({ kind: 'closed', width } as const) : null);
-	return {
-		heading,
-		legs: legs.map(([name, leg, turn]) => ({ name, length: leg, turn })),
-		startHem: hem(hems.start),
-		endHem: hem(hems.end),
-		insideRadius: length(INCH / 32),
-		finished: 'left',
-		girth: 'outside'
-	};
-}
-
-const dimension = (key: string, label: string, standard: Length): KindDimension => ({
-	key,
-	label,
-	standard
-});
-const FACE = (standard: Length) => dimension('face', 'Face', standard);
-const KICK = dimension('kick', 'Kick', HALF);
-const HEM = dimension('hem', 'Hem', HALF);
-
-const FOLDS_BACK: Closing = { leg: 'face', by: 'folds-back', hidden: [] };
-const NOT_CLOSED: Closing = { leg: '', by: 'none', hidden: [] };
+export type { Closing, KindDimension, ProfileKind } from './kind';
 
 /**
  * The trade's kinds of trim with standard dimensions of our own, every one editable. Laps follow

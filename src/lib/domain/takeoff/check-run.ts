@@ -48,12 +48,15 @@ function checkLimits(run: RunToDivide): Problem | null {
 	const limit = pieceLimit(run.limits, run.precision);
 	if (!limit) return noLimit(run);
 	const bad = run.limits.find((each) => isOutside(each.length, run.precision));
+	const returns = [run.left.returnLength, run.right.returnLength];
+	const long = returns.find((of) => of !== undefined && (of <= 0 || of > limit.length));
 	const atMost = `at most the piece limit ${written(run)(limit.length)} (${limit.governs})`;
 	return firstWrong(run, [
 		...(bad
 			? [[`${bad.kind} limit`, bad.length, true, 'more than zero, up to 1 km'] as const]
 			: []),
-		['minimum piece', run.minPiece, run.minPiece > limit.length, atMost]
+		['minimum piece', run.minPiece, run.minPiece > limit.length, atMost],
+		...(long === undefined ? [] : [['return', long, true, `more than zero and ${atMost}`] as const])
 	]);
 }
 
