@@ -1,4 +1,5 @@
 import type { BackgroundTask } from './background';
+import { mailTask } from './mail/task';
 
 /** Every background task of the server, in the order they start. */
-export const tasks = (): BackgroundTask[] => [];
+export const tasks = (): BackgroundTask[] => [mailTask()];
