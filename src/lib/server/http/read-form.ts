@@ -3,7 +3,8 @@ import type { FieldProblem } from './problem';
 import { zodProblems } from './read-json';
 
 export type FormRead<T> =
-	{ ok: true; value: T } | { ok: false; problems: FieldProblem[]; entered: Record<string, string> };
+	| { ok: true; value: T; entered: Record<string, string> }
+	| { ok: false; problems: FieldProblem[]; entered: Record<string, string> };
 
 /** What was typed, so that it can be shown again; files and passwords are left out. */
 function enteredText(form: FormData): Record<string, string> {
@@ -23,6 +24,7 @@ export async function readForm<S extends z.ZodType>(
 	for (const key of new Set(form.keys()))
 		body[key.replace(/\[\]$/, '')] = key.endsWith('[]') ? form.getAll(key) : form.get(key);
 	const parsed = schema.safeParse(body);
-	if (parsed.success) return { ok: true, value: parsed.data };
-	return { ok: false, problems: zodProblems(parsed.error, body), entered: enteredText(form) };
+	const entered = enteredText(form);
+	if (parsed.success) return { ok: true, value: parsed.data, entered };
+	return { ok: false, problems: zodProblems(parsed.error, body), entered };
 }

@@ -6,10 +6,15 @@ export type Read<T> = { ok: true; value: T } | { ok: false; response: Response }
 const received = (input: unknown): string =>
 	input === undefined ? 'nothing' : JSON.stringify(input).slice(0, 60);
 
-/** Each issue of a zod schema as one sentence: which field, what was read, what is accepted. */
+/**
+ * Each issue of a zod schema as one sentence: which field, what was read, what is accepted. An issue that
+ * carries a whole sentence of its own (`params.sentence`) keeps it.
+ */
 export function zodProblems(failure: z.ZodError, body?: unknown): FieldProblem[] {
 	return failure.issues.map((issue) => {
 		const field = issue.path.join('.') || 'body';
+		const own: unknown = issue.code === 'custom' ? issue.params?.sentence : undefined;
+		if (typeof own === 'string') return { field, sentence: own };
 		const read = issue.path.reduce<unknown>(
 			(at, key) => (at as Record<PropertyKey, unknown> | undefined)?.[key],
 			body
