@@ -40,9 +40,10 @@ function wholePrices(model: Model, prices: ArrayLike<number>): number[] {
 	const u = model.items.map((item, i) => (item.size <= free ? 0 : Math.max(0, prices[i]!)));
 	const total = u.reduce((sum, value, i) => sum + value * model.items[i]!.demand, 0);
 	if (!(total > 0) || !Number.isFinite(total)) return u.map(() => 0);
+	// As fine as exact sums allow: K is rounded up to a whole number, and a small one would cost much.
 	const scale = (EXACT - totalDemand(model)) / total;
-	const whole = u.every((value) => Number.isInteger(value)) && scale >= 1;
-	return whole ? u : u.map((value) => Math.floor(value * scale));
+	const whole = scale >= 1 && u.every((value) => Number.isInteger(value));
+	return u.map((value) => (whole ? value * Math.floor(scale) : Math.floor(value * scale)));
 }
 
 /** The largest capacity that unlimited stock gives away: what fits in it can have no price. */

@@ -49,8 +49,6 @@ export interface MipLimits {
 	readonly timeLimitMs: number;
 	/** Stop as soon as a solution of this cost or less is known. */
 	readonly target?: number;
-	/** Look only for solutions below this cost. */
-	readonly cutoff?: number;
 	/** Bound on the nodes of the search: a limit of work that does not depend on the clock. */
 	readonly maxNodes?: number;
 	/** A known solution to start from. */

@@ -64,6 +64,14 @@ export class Knapsack {
 		return counts[item]! > this.#demand[item]! ? null : counts;
 	}
 
+	/** As `bestWith`, but one copy fewer where the table has all of them spent already. */
+	bestWithin(bin: number, item: number): Int32Array {
+		const counts = new Int32Array(this.#model.items.length);
+		this.#backtrack(this.#model.bins[bin]!.coarse - this.#model.items[item]!.coarse, counts);
+		counts[item] = Math.min(this.#demand[item]!, counts[item]! + 1);
+		return counts;
+	}
+
 	/** Value of the pattern that `bestWith` would give, without building it. */
 	valueWith(bin: number, item: number): number {
 		const room = this.#model.bins[bin]!.coarse - this.#model.items[item]!.coarse;

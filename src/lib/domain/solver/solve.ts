@@ -1,23 +1,210 @@
 import type { PackingPlan, PackingProblem } from '../plan/plan';
 import { buildPlan, noPlan } from './build-plan';
-import { certify, materialPrices } from './certificate';
+import { certify, materialPrices, type ProvenBound } from './certificate';
+import { dive } from './dive';
+import { enumeratePatterns } from './enumerate';
 import { findImpossible } from './feasible';
 import { bestGreedy } from './greedy';
 import { Knapsack } from './knapsack';
-import { reduce } from './model';
-import type { SolveOptions } from './options';
+import { Master, type Relaxation } from './master';
+import { reduce, type Model } from './model';
+import type { SolveOptions, SolveProgress } from './options';
+import { costOf, lengthsOf, mergeUses, type Pattern, type Use } from './pattern';
+import { packSequential } from './sequential';
+import { solveWhole } from './whole-number';
+import { seeded, startWork, type Work } from './work';
 
 /**
  * Packs the pieces into the fewest cents of stock that time allows and proves as much as it can.
  * Never throws; the status is `proven` only with a certificate in whole numbers.
+ *
+ * The steps, each of which may close the gap and end the work: greedy plan and material bound;
+ * column generation and its certificate; rounding dives; a whole-number programme over every pattern
+ * that could still matter.
  */
 export function solve(problem: PackingProblem, options: SolveOptions): PackingPlan {
 	const impossible = findImpossible(problem);
 	if (impossible.length > 0) return noPlan(problem, 'impossible', impossible);
 	const model = reduce(problem);
-	const demand = model.items.map((item) => item.demand);
-	const uses = bestGreedy(model, demand);
-	const proven = certify(model, materialPrices(model), new Knapsack(model));
-	if (uses === null) return noPlan(problem, 'stopped', [], proven);
-	return buildPlan(problem, model, uses, proven, options.shouldStop?.() ? 'cancelled' : 'time');
+	const search = new Search(problem, model, options);
+	try {
+		search.run();
+	} catch (error) {
+		// An engine that fails loses its step, never the plan found before it.
+		search.failure = error;
+	}
+	return search.answer();
+}
+
+class Search {
+	failure: unknown = null;
+	#best: Use[] | null = null;
+	#bound: ProvenBound;
+	#exhausted = false;
+	#infeasible = false;
+	readonly #table: Knapsack;
+	readonly #work: Work | null;
+
+	constructor(
+		readonly problem: PackingProblem,
+		readonly model: Model,
+		readonly options: SolveOptions
+	) {
+		const deadline = options.clock() + options.timeLimitMs;
+		this.#table = new Knapsack(model);
+		this.#work = options.engine && startWork(options.engine, options, deadline);
+		this.#bound = certify(model, materialPrices(model), this.#table);
+	}
+
+	run(): void {
+		const demand = this.model.items.map((item) => item.demand);
+		this.#offer(bestGreedy(this.model, demand), 'first plan');
+		if (this.#closed() || !this.#work || this.#work.over()) return;
+		this.#sequential(demand);
+		if (this.#closed()) return;
+		const master = new Master(this.model, this.#table, this.#work);
+		try {
+			this.#searchWith(master, demand);
+		} finally {
+			master.dispose();
+		}
+	}
+
+	/** Worth its time before any bound but that of the material only where that bound is near. */
+	#sequential(demand: readonly number[]): void {
+		const work = this.#work!;
+		const near = this.#best && costOf(this.model, this.#best) <= 1.04 * this.#bound.costCents;
+		if (!near || this.#bound.costCents === 0) return;
+		const rules = {
+			target: this.#bound.costCents,
+			passes: 3,
+			random: seeded(work.seed),
+			over: work.over
+		};
+		const uses = packSequential(this.model, this.#table, demand, this.#limits(), rules);
+		this.#offer(uses, 'first plan');
+	}
+
+	answer(): PackingPlan {
+		const cancelled = this.options.shouldStop?.() ?? false;
+		if (this.#best === null) {
+			return noPlan(this.problem, 'stopped', [], this.#bound);
+		}
+		const reason = this.#exhausted ? 'search' : cancelled ? 'cancelled' : 'time';
+		return buildPlan(this.problem, this.model, this.#best, this.#bound, reason);
+	}
+
+	#searchWith(master: Master, demand: readonly number[]): void {
+		master.add(this.#firstPatterns());
+		const meets = (value: number, bound: number) => this.#meets(value, bound);
+		const root = master.relax(demand, this.#limits(), meets, master.sizePrices());
+		this.#certify(root);
+		this.#report('bound');
+		if (this.#closed()) return;
+		this.#dives(master, root);
+		if (this.#closed() || this.#work!.over()) return;
+		this.#wholeNumbers(master, root);
+	}
+
+	/** Dives with different first choices, each from the relaxation at the root. */
+	#dives(master: Master, root: Relaxation): void {
+		const random = seeded(this.#work!.seed);
+		const attempts = 4;
+		for (let attempt = 0; attempt < attempts; attempt++) {
+			if (this.#closed() || this.#work!.over()) return;
+			const pick = () => (attempt < 2 ? 0 : Math.floor(random() * 3));
+			const rules = { target: this.#bound.costCents, pick, generate: attempt > 0 };
+			this.#offer(dive(master, root, rules), attempt === 0 ? 'rounding' : 'diving');
+			master.setRest(
+				this.model.items.map((item) => item.demand),
+				this.#limits()
+			);
+		}
+	}
+
+	/** Every pattern a cheaper plan may use, then a whole-number programme over them. */
+	#wholeNumbers(master: Master, root: Relaxation): void {
+		const { model } = this;
+		if (root.bound === -Infinity || this.#best === null) return;
+		const K = this.#largestRatio(master, root);
+		const prices = root.prices.map((price) => price / K);
+		const gap = costOf(model, this.#best) - model.step - root.bound;
+		const list = enumeratePatterns(model, prices, gap, master.scale, 20_000, () =>
+			this.#work!.over()
+		);
+		const patterns = list.complete ? list.patterns : master.patterns;
+		const below = costOf(model, this.#best) - model.step;
+		const answer = solveWhole(model, patterns, below, this.#work!, this.#bound.costCents);
+		this.#offer(answer.uses, 'search');
+		this.#exhausted = list.complete && answer.exhausted;
+	}
+
+	/** How far the prices exceed the dearest pattern: dividing by it makes them valid for all. */
+	#largestRatio(master: Master, root: Relaxation): number {
+		const demand = this.model.items.map((item) => item.demand);
+		const best = this.#table.fill(root.prices, demand);
+		let K = 1;
+		this.model.bins.forEach((bin, s) => {
+			if (bin.limit === Infinity && bin.cost > 0) {
+				K = Math.max(K, (best[s]! * master.scale) / bin.cost);
+			}
+		});
+		return K;
+	}
+
+	#firstPatterns(): Pattern[] {
+		const { items, bins } = this.model;
+		const single = bins.flatMap((bin, s) =>
+			items.flatMap((item, i) => {
+				const times = Math.min(item.demand, Math.floor(bin.capacity / item.size));
+				return times > 0 ? [{ bin: s, items: [i], counts: [times] }] : [];
+			})
+		);
+		return [...single, ...mergeUses(this.#best ?? []).map((use) => use.pattern)];
+	}
+
+	#limits = (): number[] => this.model.bins.map((bin) => bin.limit);
+
+	#certify(root: Relaxation): void {
+		const bound = certify(this.model, root.prices, this.#table);
+		if (bound.costCents > this.#bound.costCents) this.#bound = bound;
+	}
+
+	/** True when bound and value agree at the step of the prices, or the plan is already matched. */
+	#meets(value: number, bound: number): boolean {
+		const proven = this.#roundUp(bound);
+		if (this.#best && proven >= costOf(this.model, this.#best)) return true;
+		return proven >= this.#roundUp(value);
+	}
+
+	#roundUp(cents: number): number {
+		const { step } = this.model;
+		return Math.ceil(cents / step - 1e-6) * step;
+	}
+
+	#closed(): boolean {
+		return this.#best !== null && costOf(this.model, this.#best) <= this.#bound.costCents;
+	}
+
+	#offer(uses: Use[] | null, phase: SolveProgress['phase']): void {
+		if (uses === null) return;
+		if (this.#best && costOf(this.model, uses) >= costOf(this.model, this.#best)) return;
+		this.#best = uses;
+		this.#report(phase);
+	}
+
+	#report(phase: SolveProgress['phase']): void {
+		if (!this.options.onProgress || this.#best === null) return;
+		const uses = this.#best;
+		const costCents = costOf(this.model, uses);
+		const boundCents = this.#bound.costCents;
+		this.options.onProgress({
+			phase,
+			lengths: lengthsOf(uses),
+			costCents,
+			boundCents,
+			gap: costCents > 0 ? (costCents - boundCents) / costCents : 0,
+			plan: () => buildPlan(this.problem, this.model, uses, this.#bound, 'time')
+		});
+	}
 }
