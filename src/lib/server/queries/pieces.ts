@@ -18,7 +18,13 @@ export type PlannableJob = NonNullable<ReturnType<typeof findPlannableJob>>;
 /** Runs by us, on their elevations in order, with everything their division needs. */
 export const listPlannableRuns = (db: Queryable, shopId: string, jobId: string) =>
 	db
-		.select({ run: runs, elevation: elevations, profile: profiles, material: materials, unit: units })
+		.select({
+			run: runs,
+			elevation: elevations,
+			profile: profiles,
+			material: materials,
+			unit: units
+		})
 		.from(runs)
 		.innerJoin(elevations, eq(elevations.id, runs.elevationId))
 		.innerJoin(profiles, eq(profiles.id, runs.profileId))
