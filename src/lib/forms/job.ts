@@ -121,3 +121,10 @@ export const unitSchema = z.strictObject({
 	height: ruleText.default('')
 });
 export type UnitInput = z.output<typeof unitSchema>;
+
+export const jobListQuery = z.strictObject({
+	search: textOf(100).optional(),
+	state: z
+		.enum(['open', 'archived', 'deleted'], { error: 'accepted is open, archived or deleted' })
+		.optional()
+});

@@ -21,6 +21,44 @@ export const ACCESS: Readonly<Record<string, Readonly<Record<string, Rule>>>> = 
 	'/(auth)/reset-password/[token]': { GET: 'public', 'POST ?/default': 'public' },
 	'/(auth)/accept-invite/[token]': { GET: 'public', 'POST ?/default': 'public' },
 
+	// jobs and takeoff
+	'/(app)/jobs': { GET: 'jobs.read' },
+	'/(app)/jobs/new': { GET: 'jobs.write', 'POST ?/default': 'jobs.write' },
+	'/(app)/jobs/[jobId=id]': {
+		GET: 'jobs.read',
+		'POST ?/edit': 'jobs.write',
+		'POST ?/copy': 'jobs.write',
+		'POST ?/archive': 'jobs.write',
+		'POST ?/unarchive': 'jobs.write',
+		'POST ?/delete': 'jobs.write',
+		'POST ?/restore': 'jobs.write',
+		'POST ?/addElevation': 'jobs.write',
+		'POST ?/renameElevation': 'jobs.write',
+		'POST ?/moveElevation': 'jobs.write',
+		'POST ?/removeElevation': 'jobs.write',
+		'POST ?/putUnit': 'jobs.write',
+		'POST ?/setCorner': 'jobs.write',
+		'POST ?/removeCorner': 'jobs.write'
+	},
+	'/(app)/jobs/[jobId=id]/takeoff': { GET: 'jobs.read' },
+	'/(app)/jobs/[jobId=id]/compare': { GET: 'jobs.read' },
+	'/(app)/jobs/[jobId=id]/import': {
+		GET: 'jobs.write',
+		'POST ?/upload': 'jobs.write',
+		'POST ?/take': 'jobs.write',
+		'POST ?/correct': 'jobs.write',
+		'POST ?/undo': 'jobs.write'
+	},
+	'/api/v1/jobs': { GET: 'jobs.read', POST: 'jobs.write' },
+	'/api/v1/jobs/[jobId=id]': { GET: 'jobs.read', PATCH: 'jobs.write' },
+	'/api/v1/jobs/[jobId=id]/runs': { GET: 'jobs.read', PATCH: 'jobs.write' },
+	'/api/v1/jobs/[jobId=id]/elevations': {
+		GET: 'jobs.read',
+		POST: 'jobs.write',
+		PATCH: 'jobs.write'
+	},
+	'/api/v1/jobs/[jobId=id]/corners': { GET: 'jobs.read', POST: 'jobs.write' },
+
 	// home
 	'/(app)/home': { GET: 'signed in' }
 };

@@ -39,10 +39,8 @@ export const findElevation = (db: Queryable, shopId: string, jobId: string, id: 
 		.where(and(inJob(shopId, jobId), eq(elevations.id, id), isNull(elevations.deletedAt)))
 		.get();
 
-export const insertElevation = (
-	tx: Queryable,
-	row: typeof elevations.$inferInsert
-): Elevation => tx.insert(elevations).values(row).returning().get();
+export const insertElevation = (tx: Queryable, row: typeof elevations.$inferInsert): Elevation =>
+	tx.insert(elevations).values(row).returning().get();
 
 export const updateElevation = (
 	tx: Queryable,

@@ -99,10 +99,6 @@ export const countElevations = (db: Queryable, shopId: string, jobId: string): n
 		.select({ n: sql<number>`count(*)` })
 		.from(elevations)
 		.where(
-			and(
-				eq(elevations.shopId, shopId),
-				eq(elevations.jobId, jobId),
-				isNull(elevations.deletedAt)
-			)
+			and(eq(elevations.shopId, shopId), eq(elevations.jobId, jobId), isNull(elevations.deletedAt))
 		)
 		.get()?.n ?? 0;

@@ -80,9 +80,7 @@ export const countRunsOf = (db: Queryable, shopId: string, elevationId: string):
 	db
 		.select({ n: sql<number>`count(*)` })
 		.from(runs)
-		.where(
-			and(eq(runs.shopId, shopId), eq(runs.elevationId, elevationId), isNull(runs.deletedAt))
-		)
+		.where(and(eq(runs.shopId, shopId), eq(runs.elevationId, elevationId), isNull(runs.deletedAt)))
 		.get()?.n ?? 0;
 
 /** Appends one measure; a repeated `opId` adds nothing. */
@@ -102,9 +100,7 @@ export const listCorners = (db: Queryable, shopId: string, jobId: string): Corne
 	db
 		.select()
 		.from(corners)
-		.where(
-			and(eq(corners.shopId, shopId), eq(corners.jobId, jobId), isNull(corners.deletedAt))
-		)
+		.where(and(eq(corners.shopId, shopId), eq(corners.jobId, jobId), isNull(corners.deletedAt)))
 		.orderBy(asc(corners.createdAt))
 		.all();
 

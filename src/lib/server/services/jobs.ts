@@ -110,12 +110,7 @@ const MOVES = {
 } as const;
 
 /** Archives, deletes (softly) or brings back a job. A job with releases is never deleted. */
-export function moveJob(
-	ctx: Context,
-	jobId: string,
-	version: number,
-	move: JobMove
-): Outcome<Job> {
+export function moveJob(ctx: Context, jobId: string, version: number, move: JobMove): Outcome<Job> {
 	return write(ctx.db, (tx) => {
 		const before = findJob(tx, ctx.shopId, jobId, { deleted: true });
 		if (!before || (before.deletedAt !== null && move !== 'restore')) return missing('job');

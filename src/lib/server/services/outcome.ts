@@ -1,5 +1,11 @@
 import { json } from '@sveltejs/kit';
-import { conflictJson, notFound, problemJson, type Conflict, type FieldProblem } from '../http/problem';
+import {
+	conflictJson,
+	notFound,
+	problemJson,
+	type Conflict,
+	type FieldProblem
+} from '../http/problem';
 
 /** How a use case ends when nothing is broken: done, refused with the fields named, gone, or someone was first. */
 export type Outcome<T> =

@@ -25,7 +25,11 @@ import { isSame, readRun, type RunColumns } from './read-run';
 
 export interface SavedRuns {
 	/** Each row that was put, as it is kept now. */
-	readonly saved: readonly { readonly id: string; readonly version: number; readonly hold: boolean }[];
+	readonly saved: readonly {
+		readonly id: string;
+		readonly version: number;
+		readonly hold: boolean;
+	}[];
 	readonly removed: readonly { readonly id: string; readonly version: number }[];
 	readonly at: number;
 }
@@ -41,10 +45,17 @@ interface Work {
 	readonly tx: Queryable;
 	readonly ctx: Context;
 	readonly job: Job;
-	readonly known: { readonly profiles: ReadonlySet<string>; readonly materials: ReadonlySet<string> };
+	readonly known: {
+		readonly profiles: ReadonlySet<string>;
+		readonly materials: ReadonlySet<string>;
+	};
 	readonly conflicts: RunConflict[];
 	readonly problems: FieldProblem[];
-	readonly told: { before: Record<string, unknown>; after: Record<string, unknown>; words: string[] };
+	readonly told: {
+		before: Record<string, unknown>;
+		after: Record<string, unknown>;
+		words: string[];
+	};
 }
 
 /**
@@ -247,9 +258,7 @@ function removeOne(work: Work, row: RunBatch['remove'][number]): SavedRuns['remo
 
 function refuseDuplicates(work: Work, batch: RunBatch): void {
 	const { tx, ctx, job } = work;
-	const doubled = new Set(
-		duplicateMarks(tx, ctx.shopId, job.id).map((mark) => mark.toLowerCase())
-	);
+	const doubled = new Set(duplicateMarks(tx, ctx.shopId, job.id).map((mark) => mark.toLowerCase()));
 	batch.put.forEach(({ row }, index) => {
 		if (!doubled.has(row.mark.toLowerCase())) return;
 		work.problems.push({

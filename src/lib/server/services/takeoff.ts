@@ -44,3 +44,5 @@ export function getTakeoff(ctx: Context, job: Job) {
 }
 
 export type Takeoff = ReturnType<typeof getTakeoff>;
+
+export const getRuns = (ctx: Context, jobId: string) => listRuns(ctx.db, ctx.shopId, jobId);

@@ -33,7 +33,11 @@ export class TypedReader {
 		const text = typed.replace(/%\s*$/, '').trim().replace(',', '.');
 		const value = /^\d{1,3}(\.\d{1,2})?$/.test(text) ? Math.round(Number(text) * 100) : -1;
 		if (value >= 0 && value <= 10_000) return value;
-		this.refuse(field, { where, received: typed, accepted: 'a percentage from 0 to 100, e.g. 7.5' });
+		this.refuse(field, {
+			where,
+			received: typed,
+			accepted: 'a percentage from 0 to 100, e.g. 7.5'
+		});
 		return 0;
 	}
 }
