@@ -1,4 +1,6 @@
 import Fraction from 'fraction.js';
+import { formatLength } from './format';
+import { LONGEST_LENGTH, length } from './length';
 import type { LengthReading } from './reading';
 import { readNumber } from './numbers';
 import type { Refusal } from './refusals';
@@ -143,7 +145,18 @@ function orderProblem(settled: readonly SettledTerm[], terms: readonly Term[]): 
 		}
 		const falls = term.unit.size < before.unit.size && term.unit.system === before.unit.system;
 		if (!falls || before.value.d !== 1n) return { kind: 'malformed' };
-		if (term.value.mul(term.unit.size).gte(before.unit.size)) return { kind: 'part-too-large' };
+		if (term.value.mul(term.unit.size).gte(before.unit.size))
+			return { kind: 'part-too-large', suggestion: carriedOver(terms) };
 	}
 	return null;
+}
+
+/** `14' 13"` suggests `15'-1"`; nothing when the sum is no whole number of nanometres or far too long. */
+function carriedOver(terms: readonly Term[]): string | undefined {
+	const sum = terms.reduce(
+		(total, { value, unit }) => total.add(value.mul(unit.size)),
+		new Fraction(0)
+	);
+	if (sum.d !== 1n || sum.gt(LONGEST_LENGTH)) return undefined;
+	return formatLength(length(Number(sum.n)), { units: terms[0]!.unit.system });
 }
