@@ -13,10 +13,7 @@ export default {
 				'script-src': ['self'],
 				'style-src': ['self'],
 				// The one inline style on a page: the visually hidden route announcer that Kit itself adds.
-				'style-src-attr': [
-					'unsafe-hashes',
-					'sha256-S8qMpvofolR8Mpjy4kQvEm7m1q8clzU4dfDH0AmvZjo='
-				],
+				'style-src-attr': ['unsafe-hashes', 'sha256-S8qMpvofolR8Mpjy4kQvEm7m1q8clzU4dfDH0AmvZjo='],
 				'img-src': ['self', 'data:', 'blob:'],
 				'font-src': ['self'],
 				'connect-src': ['self'],
