@@ -31,10 +31,14 @@ const UNPRINTABLE =
 export const printable = (text: string): string =>
 	text.replace(/\r\n?/g, '\n').replace(UNPRINTABLE, '').slice(0, LONGEST_CELL);
 
+/** `_x0041_` would be read as the letter A: the file format's escape is itself escaped. */
+export const stored = (text: string): string =>
+	printable(text).replace(/_(?=x[0-9a-f]{4}_)/gi, '_x005F_');
+
 export const blank: Cell = { value: null, format: '@', align: 'left' };
 /** Whatever it starts with (= + - @ tab), it is stored as text. */
 export const text = (value: string, bold = false): Cell => ({
-	value: printable(value),
+	value: stored(value),
 	format: '@',
 	align: 'left',
 	bold

@@ -8,7 +8,17 @@ import type {
 } from '../../domain/plan/snapshot';
 import { m } from '../../paraglide/messages';
 import { endWords } from '../../words/pieces';
-import { blank, blankPair, count, lengthPair, mark, text, tickBox, unitName, type Cell } from './cells';
+import {
+	blank,
+	blankPair,
+	count,
+	lengthPair,
+	mark,
+	text,
+	tickBox,
+	unitName,
+	type Cell
+} from './cells';
 import {
 	changesSheet,
 	cuttingFacts,

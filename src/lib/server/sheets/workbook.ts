@@ -4,7 +4,7 @@
  */
 import ExcelJS from 'exceljs';
 import type { UnitSystem } from '../../domain/lengths/units';
-import { printable, type Cell } from './cells';
+import { printable, stored, type Cell } from './cells';
 
 export interface Column {
 	readonly header: string;
@@ -114,7 +114,7 @@ function addHeaderBlock(sheet: ExcelJS.Worksheet, spec: SheetSpec): number {
 	for (let at = 0; at < spec.facts.length; at += spans.length)
 		addFacts(sheet, spec.facts.slice(at, at + spans.length), spans);
 	for (const caution of spec.cautions) addWide(sheet, caution, spec.columns);
-	const header = sheet.addRow(spec.columns.map((column) => column.header));
+	const header = sheet.addRow(spec.columns.map((column) => stored(column.header)));
 	header.eachCell((cell) => {
 		cell.numFmt = '@';
 		cell.font = { bold: true };
@@ -154,7 +154,7 @@ function addFacts(sheet: ExcelJS.Worksheet, facts: SheetSpec['facts'], spans: re
 		const span = spans[index]!;
 		const shown = printable(`${label}: ${value}`);
 		const cell = row.getCell(span.from);
-		cell.value = shown;
+		cell.value = stored(shown);
 		cell.numFmt = '@';
 		cell.alignment = { wrapText: true, vertical: 'top' };
 		if (span.to > span.from) sheet.mergeCells(row.number, span.from, row.number, span.to);
@@ -166,7 +166,7 @@ function addFacts(sheet: ExcelJS.Worksheet, facts: SheetSpec['facts'], spans: re
 /** A row of its own across the whole table. */
 function addWide(sheet: ExcelJS.Worksheet, value: string, columns: readonly Column[]) {
 	const shown = printable(value);
-	const row = sheet.addRow([shown]);
+	const row = sheet.addRow([stored(shown)]);
 	const cell = row.getCell(1);
 	cell.numFmt = '@';
 	cell.alignment = { wrapText: true, vertical: 'top' };
