@@ -8,10 +8,13 @@ const job = (over: Partial<JobNeed>): JobNeed => ({
 	buy: null,
 	cut: null,
 	leftOut: false,
-	claimed: 0,
 	...over
 });
-const lengths = (planned: number, marginPercent = 0) => ({ planned, marginPercent });
+const lengths = (planned: number, marginPercent = 0, claimed = 0) => ({
+	planned,
+	marginPercent,
+	claimed
+});
 
 describe('what is to buy', () => {
 	it.each([
@@ -44,10 +47,10 @@ describe('what is to buy', () => {
 	});
 
 	it('lengths a release has claimed are covered and not bought again', () => {
-		const claimed = job({ buy: lengths(40, 5), cut: lengths(36), leftOut: true, claimed: 36 });
-		expect(needOf([claimed], { onHand: 6, onOrder: 0 })).toMatchObject({ required: 6, toBuy: 0 });
+		const held = job({ buy: lengths(40, 5, 36), cut: lengths(36, 0, 36), leftOut: true });
+		expect(needOf([held], { onHand: 6, onOrder: 0 })).toMatchObject({ required: 6, toBuy: 0 });
 		// One job's claims never cover another job's need.
-		const other = job({ cut: lengths(5), claimed: 9 });
+		const other = job({ cut: lengths(5, 0, 9) });
 		expect(needOf([other, job({ cut: lengths(7) })], { onHand: 0, onOrder: 0 }).toBuy).toBe(7);
 	});
 

@@ -4,6 +4,11 @@ export interface ReleasedLengths {
 	readonly planned: number;
 	/** Whole percent bought on top. */
 	readonly marginPercent: number;
+	/**
+	 * Full lengths taken from the rack for it, cut or not: those that the release to cut has claimed; for a
+	 * release to buy, those that any release to cut of the job has.
+	 */
+	readonly claimed: number;
 }
 
 /** What one job asks of one stock length. */
@@ -12,24 +17,24 @@ export interface JobNeed {
 	readonly cut: ReleasedLengths | null;
 	/** Whether the release to cut left runs out that are on hold. */
 	readonly leftOut: boolean;
-	/** Full lengths from the rack that the job's releases have claimed: covered, cut or not. */
-	readonly claimed: number;
 }
 
 /** Returns the extra lengths a margin asks for: a started length is a whole one. */
 export const marginLengths = (of: ReleasedLengths): number =>
 	Math.ceil((of.planned * of.marginPercent) / 100);
 
-const total = (of: ReleasedLengths): number => of.planned + marginLengths(of);
+/** Returns planned + margin − claimed, never below zero. */
+export const openLengths = (of: ReleasedLengths): number =>
+	Math.max(0, of.planned + marginLengths(of) - of.claimed);
 
 /**
  * Returns the one release of a job that counts for a stock length, null when there is none. A release to cut
- * supersedes the release to buy of the same job; while it leaves runs on hold out, the larger of the two
- * counts, so that metal bought ahead for those runs is neither forgotten nor bought twice.
+ * supersedes the release to buy of the same job; while it leaves runs on hold out, the one with more still
+ * open counts, so that metal bought ahead for those runs is neither forgotten nor bought twice.
  */
 export function countedRelease(of: JobNeed): ReleasedLengths | null {
 	if (!of.cut || !of.buy) return of.cut ?? of.buy;
-	return of.leftOut && total(of.buy) > total(of.cut) ? of.buy : of.cut;
+	return of.leftOut && openLengths(of.buy) > openLengths(of.cut) ? of.buy : of.cut;
 }
 
 /** Full lengths of one stock length, wherever they are. */
@@ -44,7 +49,7 @@ export interface Need extends Holdings {
 	readonly planned: number;
 	readonly spare: number;
 	readonly claimed: number;
-	/** What is still to be covered: planned + spare − claimed, job by job, never below zero. */
+	/** What is still to be covered, job by job: planned + spare − claimed, never below zero. */
 	readonly required: number;
 	/** required − on hand − on order, never below zero. */
 	readonly toBuy: number;
@@ -56,11 +61,12 @@ export interface Need extends Holdings {
 export function needOf(jobs: readonly JobNeed[], held: Holdings): Need {
 	const sum = { planned: 0, spare: 0, claimed: 0, required: 0 };
 	for (const job of jobs) {
-		const counted = countedRelease(job) ?? { planned: 0, marginPercent: 0 };
+		const counted = countedRelease(job);
+		if (!counted) continue;
 		sum.planned += counted.planned;
 		sum.spare += marginLengths(counted);
-		sum.claimed += job.claimed;
-		sum.required += Math.max(0, total(counted) - job.claimed);
+		sum.claimed += counted.claimed;
+		sum.required += openLengths(counted);
 	}
 	const missing = sum.required - held.onHand - held.onOrder;
 	return { ...held, ...sum, toBuy: Math.max(0, missing), surplus: Math.max(0, -missing) };
