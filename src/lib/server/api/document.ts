@@ -41,8 +41,11 @@ function toOperation(operation: ApiOperation): ZodOpenApiOperationObject {
 	return {
 		summary: operation.summary,
 		description: `Asks for: ${operation.permission}.`,
-		requestParams: { path: z.object(path), query: operation.query },
-		requestBody: operation.body ? { content: json(operation.body) } : undefined,
+		requestParams: {
+			path: z.object(path),
+			...(operation.query ? { query: operation.query } : {})
+		},
+		...(operation.body ? { requestBody: { content: json(operation.body) } } : {}),
 		responses: Object.fromEntries([...refusals, ...answers])
 	};
 }
