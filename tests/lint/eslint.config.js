@@ -6,7 +6,7 @@ import ts from 'typescript-eslint';
 import svelteConfig from '../../svelte.config.js';
 
 /** Domain folders in order: each imports only itself and those before it. */
-const DOMAIN = ['lengths', 'profiles', 'takeoff', 'plan', 'waste', 'trade', 'solver'];
+const DOMAIN = ['lengths', 'profiles', 'takeoff', 'plan', 'waste', 'trade', 'solver', 'bid'];
 const MAY_IMPORT = {
 	lengths: [],
 	profiles: ['lengths'],
@@ -14,7 +14,8 @@ const MAY_IMPORT = {
 	plan: ['lengths', 'profiles', 'takeoff'],
 	waste: ['lengths', 'profiles', 'takeoff', 'plan'],
 	trade: ['lengths', 'profiles', 'takeoff'],
-	solver: ['lengths', 'profiles', 'takeoff', 'plan', 'waste']
+	solver: ['lengths', 'profiles', 'takeoff', 'plan', 'waste'],
+	bid: ['lengths', 'profiles', 'takeoff', 'plan', 'waste', 'solver']
 };
 
 const PURE = {
