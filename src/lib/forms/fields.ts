@@ -1,0 +1,133 @@
+/**
+ * Fields of a posted form: text in, values out, each refusal one whole sentence that names the field as its
+ * label does. Lengths go through `parseLength` here and nowhere after.
+ */
+import { z } from 'zod';
+import type { LengthReading } from '../domain/lengths/reading';
+import { parseLength } from '../domain/lengths/parse';
+import type { UnitSystem } from '../domain/lengths/units';
+import { describeProblem, type Problem, type Result } from '../domain/result';
+import { isId } from './id';
+import { parseCents } from './money';
+
+type Refuse = (problem: Problem) => never;
+
+/** A field that is missing or not text counts as empty, so that nothing a browser sends is a surprise. */
+export const typedText = z.unknown().transform((value) => (typeof value === 'string' ? value : ''));
+
+/** A field whose text a function reads; what it refuses becomes the field's problem. */
+export const readText = <T>(read: (text: string) => Result<T>) =>
+	typedText.transform((text, ctx): T => {
+		const done = read(text);
+		if (done.ok) return done.value;
+		return refuseIn(ctx)(done.problem);
+	});
+
+const refuseIn =
+	(ctx: z.RefinementCtx): Refuse =>
+	(problem) => {
+		const sentence = describeProblem(problem);
+		ctx.addIssue({ code: 'custom', message: sentence, params: { sentence } });
+		return z.NEVER;
+	};
+
+const refused = (where: string, received: string, accepted: string): Result<never> => ({
+	ok: false,
+	problem: { kind: 'form.field', where, received: received.slice(0, 60), accepted }
+});
+
+/** A typed length. */
+export const lengthField = (
+	where: string,
+	units: UnitSystem,
+	range: LengthReading['range'] = 'positive'
+) => readText((text) => parseLength(text, { units, where, range }));
+
+/** A typed length, or null when nothing was entered. */
+export const optionalLength = (
+	where: string,
+	units: UnitSystem,
+	range: LengthReading['range'] = 'positive'
+) =>
+	readText((text) =>
+		text.trim() === '' ? { ok: true, value: null } : parseLength(text, { units, where, range })
+	);
+
+/** Words of at least `least` and at most `most` characters after trimming. */
+export const wordsField = (where: string, most: number, least = 0) =>
+	readText((text) => {
+		const words = text.trim().replace(/\s+/g, ' ');
+		if (words.length >= least && words.length <= most) return { ok: true, value: words };
+		return refused(where, words, `text of ${least} to ${most} characters`);
+	});
+
+/** A short code such as `DE-02`: letters, digits, hyphens, dots and slashes. */
+export const codeField = (where: string) =>
+	readText((text) => {
+		const code = text.trim();
+		if (/^[A-Za-z0-9][A-Za-z0-9./-]{0,23}$/.test(code)) return { ok: true, value: code };
+		return refused(where, code, '1 to 24 letters, digits, hyphens, dots or slashes');
+	});
+
+export const centsField = (where: string) => readText((text) => parseCents(text, where));
+
+/** Whole cents, or null when nothing was entered. */
+export const optionalCents = (where: string) =>
+	readText((text) => (text.trim() === '' ? { ok: true, value: null } : parseCents(text, where)));
+
+/** A whole number in a range. */
+export const wholeField = (where: string, least: number, most: number) =>
+	readText((text) => {
+		const plain = text.trim();
+		const value = /^\d{1,9}$/.test(plain) ? Number(plain) : NaN;
+		if (value >= least && value <= most) return { ok: true, value };
+		return refused(where, plain, `a whole number from ${least} to ${most}`);
+	});
+
+/** A whole number in a range, or null when nothing was entered. */
+export const optionalWhole = (where: string, least: number, most: number) =>
+	typedText.transform((text, ctx) => {
+		if (text.trim() === '') return null;
+		const read = wholeField(where, least, most).safeParse(text);
+		if (read.success) return read.data;
+		ctx.issues.push(...(read.error.issues as never[]));
+		return z.NEVER;
+	});
+
+/** One of a list of words. */
+export const choiceField = <const T extends readonly string[]>(where: string, of: T) =>
+	readText((text): Result<T[number]> => {
+		if ((of as readonly string[]).includes(text)) return { ok: true, value: text };
+		return refused(where, text, of.join(', '));
+	});
+
+/** A ticked box. */
+export const tickField = typedText.transform((text) => text === 'on');
+
+/** An identifier chosen from a list. */
+export const idField = (where: string) =>
+	readText((text) => (isId(text) ? { ok: true, value: text } : refused(where, text, 'one of the list')));
+
+export const optionalId = (where: string) =>
+	readText((text): Result<string | null> => {
+		if (text === '') return { ok: true, value: null };
+		return isId(text) ? { ok: true, value: text } : refused(where, text, 'one of the list');
+	});
+
+/** A calendar date as a date field sends it. */
+export const dateField = (where: string) =>
+	readText((text) => {
+		const at = /^\d{4}-\d{2}-\d{2}$/.test(text) ? new Date(`${text}T00:00:00Z`) : null;
+		if (at && !Number.isNaN(at.getTime()) && at.toISOString().startsWith(text))
+			return { ok: true, value: text };
+		return refused(where, text, 'a date such as 2026-03-31');
+	});
+
+/** Version of the row that was read; hidden, so a bad one can only be tampered with. */
+export const versionField = wholeField('Version', 1, 999_999_999);
+
+/** A problem found across fields, put at one of them. */
+export function refuseAt(ctx: z.RefinementCtx, path: PropertyKey[], problem: Problem): void {
+	const sentence = describeProblem(problem);
+	ctx.addIssue({ code: 'custom', message: sentence, params: { sentence }, path });
+}
