@@ -3,6 +3,7 @@
  * label does. Lengths go through `parseLength` here and nowhere after.
  */
 import { z } from 'zod';
+import type { Length } from '../domain/lengths/length';
 import type { LengthReading } from '../domain/lengths/reading';
 import { parseLength } from '../domain/lengths/parse';
 import type { UnitSystem } from '../domain/lengths/units';
@@ -49,13 +50,13 @@ export const optionalLength = (
 	units: UnitSystem,
 	range: LengthReading['range'] = 'positive'
 ) =>
-	readText((text) =>
+	readText<Length | null>((text) =>
 		text.trim() === '' ? { ok: true, value: null } : parseLength(text, { units, where, range })
 	);
 
 /** Words of at least `least` and at most `most` characters after trimming. */
 export const wordsField = (where: string, most: number, least = 0) =>
-	readText((text) => {
+	readText<string>((text) => {
 		const words = text.trim().replace(/\s+/g, ' ');
 		if (words.length >= least && words.length <= most) return { ok: true, value: words };
 		return refused(where, words, `text of ${least} to ${most} characters`);
@@ -63,7 +64,7 @@ export const wordsField = (where: string, most: number, least = 0) =>
 
 /** A short code such as `DE-02`: letters, digits, hyphens, dots and slashes. */
 export const codeField = (where: string) =>
-	readText((text) => {
+	readText<string>((text) => {
 		const code = text.trim();
 		if (/^[A-Za-z0-9][A-Za-z0-9./-]{0,23}$/.test(code)) return { ok: true, value: code };
 		return refused(where, code, '1 to 24 letters, digits, hyphens, dots or slashes');
@@ -73,30 +74,30 @@ export const centsField = (where: string) => readText((text) => parseCents(text,
 
 /** Whole cents, or null when nothing was entered. */
 export const optionalCents = (where: string) =>
-	readText((text) => (text.trim() === '' ? { ok: true, value: null } : parseCents(text, where)));
+	readText<number | null>((text) =>
+		text.trim() === '' ? { ok: true, value: null } : parseCents(text, where)
+	);
+
+function readWhole(text: string, where: string, least: number, most: number): Result<number> {
+	const plain = text.trim();
+	const value = /^\d{1,9}$/.test(plain) ? Number(plain) : NaN;
+	if (value >= least && value <= most) return { ok: true, value };
+	return refused(where, plain, `a whole number from ${least} to ${most}`);
+}
 
 /** A whole number in a range. */
 export const wholeField = (where: string, least: number, most: number) =>
-	readText((text) => {
-		const plain = text.trim();
-		const value = /^\d{1,9}$/.test(plain) ? Number(plain) : NaN;
-		if (value >= least && value <= most) return { ok: true, value };
-		return refused(where, plain, `a whole number from ${least} to ${most}`);
-	});
+	readText((text) => readWhole(text, where, least, most));
 
 /** A whole number in a range, or null when nothing was entered. */
 export const optionalWhole = (where: string, least: number, most: number) =>
-	typedText.transform((text, ctx) => {
-		if (text.trim() === '') return null;
-		const read = wholeField(where, least, most).safeParse(text);
-		if (read.success) return read.data;
-		ctx.issues.push(...(read.error.issues as never[]));
-		return z.NEVER;
-	});
+	readText<number | null>((text) =>
+		text.trim() === '' ? { ok: true, value: null } : readWhole(text, where, least, most)
+	);
 
 /** One of a list of words. */
 export const choiceField = <const T extends readonly string[]>(where: string, of: T) =>
-	readText((text): Result<T[number]> => {
+	readText<T[number]>((text) => {
 		if ((of as readonly string[]).includes(text)) return { ok: true, value: text };
 		return refused(where, text, of.join(', '));
 	});
@@ -106,17 +107,19 @@ export const tickField = typedText.transform((text) => text === 'on');
 
 /** An identifier chosen from a list. */
 export const idField = (where: string) =>
-	readText((text) => (isId(text) ? { ok: true, value: text } : refused(where, text, 'one of the list')));
+	readText<string>((text) =>
+		isId(text) ? { ok: true, value: text } : refused(where, text, 'one of the list')
+	);
 
 export const optionalId = (where: string) =>
-	readText((text): Result<string | null> => {
+	readText<string | null>((text) => {
 		if (text === '') return { ok: true, value: null };
 		return isId(text) ? { ok: true, value: text } : refused(where, text, 'one of the list');
 	});
 
 /** A calendar date as a date field sends it. */
 export const dateField = (where: string) =>
-	readText((text) => {
+	readText<string>((text) => {
 		const at = /^\d{4}-\d{2}-\d{2}$/.test(text) ? new Date(`${text}T00:00:00Z`) : null;
 		if (at && !Number.isNaN(at.getTime()) && at.toISOString().startsWith(text))
 			return { ok: true, value: text };

@@ -3,7 +3,28 @@ import { formatLength } from '../domain/lengths/format';
 import type { Length } from '../domain/lengths/length';
 import type { UnitSystem } from '../domain/lengths/units';
 import { m } from '../paraglide/messages';
-import { codeField, lengthField, tickField, versionField, wholeField, wordsField } from './fields';
+import { codeField, lengthField, readText, tickField, versionField, wordsField } from './fields';
+import type { Result } from '../domain/result';
+
+/** One pound per square foot in grams per square metre: 453.59237 g over 0.09290304 m². */
+const POUND_PER_SQUARE_FOOT = 453.59237 / 0.09290304;
+
+/** Grams per square metre of what was typed: lb/ft² in an imperial shop, kg/m² in a metric one. */
+export function parseAreaWeight(text: string, where: string, units: UnitSystem): Result<number> {
+	const plain = text.trim().replace(',', '.');
+	const typed = /^(\d{1,3}(\.\d{1,6})?|\.\d{1,6})$/.test(plain) ? Number(plain) : NaN;
+	const value = Math.round(typed * (units === 'metric' ? 1000 : POUND_PER_SQUARE_FOOT));
+	if (value >= 1 && value <= 200_000) return { ok: true, value };
+	const accepted =
+		units === 'metric' ? 'kg per m², such as 2.783' : 'pounds per square foot, such as 0.57';
+	return { ok: false, problem: { kind: 'material.weight', where, received: plain, accepted } };
+}
+
+/** Grams per square metre as they are typed; reading it again gives the same grams. */
+export const formatAreaWeight = (grams: number, units: UnitSystem): string =>
+	units === 'metric'
+		? String(grams / 1000)
+		: String(Number((grams / POUND_PER_SQUARE_FOOT).toFixed(4)));
 
 /** A material as a person fills it in. Gauge is a label; the thickness is what counts. */
 export const materialForm = (units: UnitSystem) =>
@@ -15,7 +36,7 @@ export const materialForm = (units: UnitSystem) =>
 		finish: wordsField(m.catalog_finish(), 60, 1),
 		colourName: wordsField(m.catalog_colour(), 60),
 		colourCode: wordsField(m.catalog_colour_code(), 30),
-		gramsPerSquareMetre: wholeField(m.catalog_weight_area(), 1, 200_000),
+		gramsPerSquareMetre: readText((text) => parseAreaWeight(text, m.catalog_weight_area(), units)),
 		directional: tickField
 	});
 export const materialEditForm = (units: UnitSystem) =>
@@ -39,7 +60,8 @@ export const materialTexts = (of: MaterialInput, units: UnitSystem) => ({
 	finish: of.finish,
 	colourName: of.colourName,
 	colourCode: of.colourCode,
-	gramsPerSquareMetre: of.gramsPerSquareMetre > 0 ? String(of.gramsPerSquareMetre) : '',
+	gramsPerSquareMetre:
+		of.gramsPerSquareMetre > 0 ? formatAreaWeight(of.gramsPerSquareMetre, units) : '',
 	directional: of.directional ? 'on' : ''
 });
 export const NEW_MATERIAL: MaterialInput = {

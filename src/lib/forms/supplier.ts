@@ -9,7 +9,10 @@ const email = (where: string) =>
 		if (/^[^\s@,;<>"]+@[^\s@,;<>"]+\.[^\s@,;<>".]+$/.test(address) && address.length <= 254)
 			return { ok: true, value: address };
 		const problem = { kind: 'form.email', where, received: address.slice(0, 60) };
-		return { ok: false, problem: { ...problem, accepted: 'an address such as orders@metal.example' } };
+		return {
+			ok: false,
+			problem: { ...problem, accepted: 'an address such as orders@metal.example' }
+		};
 	});
 
 /** A supplier as a person fills it in. */

@@ -45,8 +45,7 @@ export const crosses = (a: Line, b: Line): boolean =>
 
 /** Whether a line passes through a box or ends in it. */
 export function touches(line: Line, box: Box): boolean {
-	const inside = ({ x, y }: Spot) =>
-		x > box.left && x < box.right && y > box.top && y < box.bottom;
+	const inside = ({ x, y }: Spot) => x > box.left && x < box.right && y > box.top && y < box.bottom;
 	if (inside(line.from) || inside(line.to)) return true;
 	const diagonal = (x1: number, y1: number, x2: number, y2: number): Line => ({
 		from: { x: x1, y: y1 },

@@ -76,13 +76,8 @@ function costOf(box: Box, taken: Taken): number {
 const sizeOf = (text: string) => ({ width: text.length * CHARACTER + 6, height: LINE_HEIGHT });
 
 function cheapest<T>(candidates: readonly T[], cost: (candidate: T) => number): T {
-	return candidates.reduce(
-		(best, candidate) => {
-			const price = cost(candidate);
-			return price < best.price ? { candidate, price } : best;
-		},
-		{ candidate: candidates[0]!, price: cost(candidates[0]!) }
-	).candidate;
+	const prices = candidates.map(cost);
+	return candidates[prices.indexOf(Math.min(...prices))]!;
 }
 
 interface Placed extends Line {
@@ -215,7 +210,13 @@ function drawLine(shape: ProfileShape, sheet: Sheet) {
 	const legs = drawn.legs.map((leg): Placed => ({ from: to(leg.from), to: to(leg.to), leg }));
 	const hems = drawn.hems.map((hem) => ({ hem, tip: hem.points.map(to) }));
 	const points = drawn.points.map(to);
-	return { legs, hems, points, ticks: legs.flatMap(ticksOf), bends: legs.slice(1).map((leg) => leg.from) };
+	return {
+		legs,
+		hems,
+		points,
+		ticks: legs.flatMap(ticksOf),
+		bends: legs.slice(1).map((leg) => leg.from)
+	};
 }
 
 /** Returns a small drawing without words: line, bends and finish ticks. */

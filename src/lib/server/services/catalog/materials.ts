@@ -9,7 +9,16 @@ import {
 	updateMaterial as update,
 	type Material
 } from '../../queries/materials';
-import { archiveRow, codeTaken, refused, saved, tellMade, updateRow, type At, type Saved } from './save';
+import {
+	archiveRow,
+	codeTaken,
+	refused,
+	saved,
+	tellMade,
+	updateRow,
+	type At,
+	type Saved
+} from './save';
 
 const MATERIALS = {
 	entity: 'material',
@@ -41,7 +50,5 @@ export const updateMaterial = (ctx: Context, at: At, input: MaterialInput): Save
 		}
 	});
 
-export const archiveMaterial = (
-	ctx: Context,
-	at: At & { archived: boolean }
-): Saved<Material> => archiveRow(ctx, MATERIALS, at);
+export const archiveMaterial = (ctx: Context, at: At & { archived: boolean }): Saved<Material> =>
+	archiveRow(ctx, MATERIALS, at);

@@ -51,7 +51,10 @@ function book(tx: Queryable, ctx: Context, { id, to, ...of }: Movement): void {
 }
 
 /** Puts an offcut on the rack under the shop's next label. */
-export const addOffcut = (ctx: Context, input: OffcutInput): Saved<ListedMetal> & { label?: string } =>
+export const addOffcut = (
+	ctx: Context,
+	input: OffcutInput
+): Saved<ListedMetal> & { label?: string } =>
 	write(ctx.db, (tx) => {
 		const profile = findProfile(tx, ctx.shopId, input.profileId);
 		const material = findMaterial(tx, ctx.shopId, input.materialId);
@@ -87,7 +90,9 @@ const missingPair = (profile: boolean, material: boolean): FieldProblem[] =>
 /** What may no longer be done to metal that is gone or that a release to cut has claimed. */
 function standing(metal: ListedMetal, field: string): FieldProblem[] {
 	if (metal.state !== 'on hand')
-		return [{ field, sentence: `${metal.label} is ${metal.state}; only metal on hand can be changed.` }];
+		return [
+			{ field, sentence: `${metal.label} is ${metal.state}; only metal on hand can be changed.` }
+		];
 	if (metal.claimedReleaseId)
 		return [
 			{

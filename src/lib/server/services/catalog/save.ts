@@ -62,8 +62,7 @@ export function updateRow<T extends Row, Changes>(
 		const problems = act.check?.(found) ?? [];
 		if (problems.length > 0) return { kind: 'refused', problems };
 		const changes = act.changes(found);
-		if (!aggregate.update(tx, ctx.shopId, at, changes))
-			return { kind: 'conflict', theirs: before };
+		if (!aggregate.update(tx, ctx.shopId, at, changes)) return { kind: 'conflict', theirs: before };
 		act.also?.(found);
 		appendHistory(tx, ctx, {
 			action: act.action,
@@ -100,7 +99,12 @@ export const archiveRow = <T extends Row, Changes extends { archivedAt?: number 
 export function tellMade(
 	tx: Queryable,
 	ctx: Context,
-	entry: { readonly entity: string; readonly id: string; readonly name: string; readonly after: unknown }
+	entry: {
+		readonly entity: string;
+		readonly id: string;
+		readonly name: string;
+		readonly after: unknown;
+	}
 ): void {
 	appendHistory(tx, ctx, {
 		action: 'made',

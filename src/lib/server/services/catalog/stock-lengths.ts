@@ -106,7 +106,5 @@ export const archiveStockLength = (
 				: [];
 		},
 		changes: ({ tx, before }) =>
-			at.archived
-				? { standard: false }
-				: { standard: !findStandardStick(tx, ctx.shopId, before) }
+			at.archived ? { standard: false } : { standard: !findStandardStick(tx, ctx.shopId, before) }
 	});

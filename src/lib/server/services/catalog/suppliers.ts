@@ -33,7 +33,5 @@ export const updateSupplier = (ctx: Context, at: At, input: SupplierInput): Save
 		tell: () => `${SUPPLIERS.name(input)} was changed.`
 	});
 
-export const archiveSupplier = (
-	ctx: Context,
-	at: At & { archived: boolean }
-): Saved<Supplier> => archiveRow(ctx, SUPPLIERS, at);
+export const archiveSupplier = (ctx: Context, at: At & { archived: boolean }): Saved<Supplier> =>
+	archiveRow(ctx, SUPPLIERS, at);
