@@ -41,7 +41,6 @@ class Search {
 	#best: Use[] | null = null;
 	#bound: ProvenBound;
 	#exhausted = false;
-	#infeasible = false;
 	readonly #table: Knapsack;
 	readonly #work: Work | null;
 
