@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, inArray, isNull } from 'drizzle-orm';
+import { and, asc, desc, eq, inArray, isNull, sql } from 'drizzle-orm';
 import type { Queryable } from '../db/client';
 import { materials, profiles, stockLengths } from '../db/schema/catalog';
 import { elevations, jobs, runs, units } from '../db/schema/jobs';
@@ -79,7 +79,7 @@ export function stepsReached(
 		.select({ pieceId: pieceSteps.pieceId, step: pieceSteps.step, done: pieceSteps.done })
 		.from(pieceSteps)
 		.where(and(eq(pieceSteps.shopId, shopId), eq(pieceSteps.jobId, jobId)))
-		.orderBy(desc(pieceSteps.createdAt), desc(pieceSteps.id))
+		.orderBy(desc(pieceSteps.createdAt), sql`${pieceSteps}.rowid desc`)
 		.all();
 	const latest = new Map<string, boolean>();
 	const reached = new Map<string, PieceStep>();

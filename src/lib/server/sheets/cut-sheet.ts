@@ -12,6 +12,7 @@ import {
 	blank,
 	blankPair,
 	count,
+	lengthNumber,
 	lengthPair,
 	mark,
 	text,
@@ -98,23 +99,21 @@ function verdictFact(group: SnapshotGroup): Fact {
 function columnsOf(units: Units): Column[] {
 	const unit = unitName(units);
 	return [
-		{ header: m.sheets_stick(), width: 6 },
-		{ header: m.sheets_from(), width: 14 },
-		{ header: m.sheets_usable(), width: 12 },
-		{ header: `${m.sheets_usable()}, ${unit}`, width: 11 },
-		{ header: m.sheets_cut(), width: 5 },
-		{ header: m.sheets_mark(), width: 13 },
-		{ header: m.sheets_running_mark(), width: 13 },
-		{ header: `${m.sheets_running_mark()}, ${unit}`, width: 11 },
-		{ header: m.sheets_length(), width: 13 },
-		{ header: `${m.sheets_length()}, ${unit}`, width: 11 },
-		{ header: m.sheets_left_end(), width: 18 },
-		{ header: m.sheets_right_end(), width: 18 },
-		{ header: m.sheets_loss(), width: 11 },
-		{ header: `${m.sheets_loss()}, ${unit}`, width: 11 },
+		{ header: m.sheets_stick(), width: 5 },
+		{ header: m.sheets_from(), width: 12 },
+		{ header: `${m.sheets_usable()}, ${unit}`, width: 10 },
+		{ header: m.sheets_cut(), width: 4 },
+		{ header: m.sheets_mark(), width: 10 },
+		{ header: m.sheets_running_mark(), width: 12 },
+		{ header: `${m.sheets_running_mark()}, ${unit}`, width: 10 },
+		{ header: m.sheets_length(), width: 12 },
+		{ header: `${m.sheets_length()}, ${unit}`, width: 10 },
+		{ header: m.sheets_left_end(), width: 13 },
+		{ header: m.sheets_right_end(), width: 13 },
+		{ header: `${m.sheets_loss()}, ${unit}`, width: 10 },
 		{ header: m.sheets_left_over(), width: 12 },
-		{ header: `${m.sheets_left_over()}, ${unit}`, width: 11 },
-		{ header: m.sheets_done(), width: 6 }
+		{ header: `${m.sheets_left_over()}, ${unit}`, width: 10 },
+		{ header: m.sheets_done(), width: 5 }
 	];
 }
 
@@ -136,9 +135,9 @@ function stickRows(stick: SnapshotStick, units: Units): Cell[][] {
 		return [
 			count(stick.number),
 			text(sourceName(stick, units)),
-			...(first ? lengthPair(stick.usable, units) : blankPair),
+			first ? lengthNumber(stick.usable, units) : blank,
 			...(cut ? cutCells(cut, index, units) : uncutCells),
-			...(last ? lengthPair(lossOf(stick), units) : blankPair),
+			last ? lengthNumber(lossOf(stick), units) : blank,
 			...(last ? lengthPair(stick.left, units) : blankPair),
 			tickBox
 		];
@@ -157,19 +156,19 @@ const uncutCells: readonly Cell[] = [blank, blank, ...blankPair, ...blankPair, b
 
 function totalsOf(sticks: readonly SnapshotStick[], units: Units): Cell[] {
 	const cuts = sticks.flatMap((stick) => stick.cuts);
-	const sum = (of: readonly Length[]) => lengthPair(add(ZERO, ...of), units);
+	const sum = (of: readonly Length[]) => add(ZERO, ...of);
 	return [
 		count(sticks.length),
 		text(m.sheets_total()),
-		...sum(sticks.map((stick) => stick.usable)),
+		lengthNumber(sum(sticks.map((stick) => stick.usable)), units),
 		count(cuts.length),
 		blank,
 		...blankPair,
-		...sum(cuts.map((cut) => cut.length)),
+		...lengthPair(sum(cuts.map((cut) => cut.length)), units),
 		blank,
 		blank,
-		...sum(sticks.map(lossOf)),
-		...sum(sticks.map((stick) => stick.left)),
+		lengthNumber(sum(sticks.map(lossOf)), units),
+		...lengthPair(sum(sticks.map((stick) => stick.left)), units),
 		blank
 	];
 }

@@ -1,3 +1,4 @@
+import { formatLength } from '../../domain/lengths/format';
 import { add, ZERO } from '../../domain/lengths/length';
 import type {
 	ReleaseSnapshot,
@@ -71,10 +72,10 @@ function elevationSheet(
 		totals: [
 			count(pieces.length),
 			text(m.sheets_total()),
-			...Array<Cell>(4).fill(blank),
+			...Array<Cell>(3).fill(blank),
 			...lengthPair(add(ZERO, ...pieces.map(({ piece }) => piece.length)), units),
 			...blankPair,
-			...Array<Cell>(6).fill(blank),
+			...Array<Cell>(4).fill(blank),
 			weight(
 				pieces.reduce((grams, { piece }) => grams + piece.grams, 0),
 				units
@@ -104,25 +105,22 @@ const groupLabels = () => [m.sheets_profile(), m.sheets_material(), m.sheets_col
 function columnsOf(units: Units): Column[] {
 	const unit = unitName(units);
 	return [
-		{ header: m.sheets_order(), width: 6 },
-		{ header: m.sheets_unit(), width: 8 },
-		{ header: m.sheets_run(), width: 9 },
-		{ header: m.sheets_mark(), width: 12 },
-		{ header: m.sheets_kind(), width: 11 },
-		{ header: m.sheets_profile_material(), width: 18 },
+		{ header: m.sheets_order(), width: 5 },
+		{ header: m.sheets_unit_and_run(), width: 11 },
+		{ header: m.sheets_mark(), width: 10 },
+		{ header: m.sheets_kind(), width: 8 },
+		{ header: m.sheets_profile_material(), width: 14 },
 		{ header: m.sheets_length(), width: 12 },
 		{ header: `${m.sheets_length()}, ${unit}`, width: 10 },
 		{ header: m.sheets_starts_at(), width: 12 },
 		{ header: `${m.sheets_starts_at()}, ${unit}`, width: 10 },
-		{ header: m.sheets_left_end(), width: 17 },
-		{ header: m.sheets_right_end(), width: 17 },
-		{ header: m.sheets_meets(), width: 26 },
-		{ header: m.sheets_height(), width: 11 },
-		{ header: `${m.sheets_height()}, ${unit}`, width: 9 },
-		{ header: m.sheets_verified(), width: 14 },
-		{ header: m.sheets_weight({ unit: units === 'metric' ? 'kg' : 'lb' }), width: 8 },
-		{ header: m.sheets_fitted(), width: 7 },
-		{ header: m.sheets_note(), width: 22 }
+		{ header: m.sheets_left_end(), width: 12 },
+		{ header: m.sheets_right_end(), width: 12 },
+		{ header: m.sheets_meets(), width: 20 },
+		{ header: m.sheets_height(), width: 9 },
+		{ header: m.sheets_weight({ unit: units === 'metric' ? 'kg' : 'lb' }), width: 7 },
+		{ header: m.sheets_fitted(), width: 6 },
+		{ header: m.sheets_verified_and_note(), width: 18 }
 	];
 }
 
@@ -134,8 +132,7 @@ function pieceRow(
 ): Cell[] {
 	return [
 		count(order),
-		text(run.unitMark),
-		text(run.mark),
+		text([run.unitMark, run.mark].filter(Boolean).join(' ')),
 		mark(piece.mark),
 		text(kindWords(piece.kind)),
 		text(`${run.profileCode} · ${run.materialCode}`),
@@ -144,11 +141,12 @@ function pieceRow(
 		text(endWords(piece.leftEnd)),
 		text(endWords(piece.rightEnd)),
 		text(jointWords(piece.mark, run.joints, units).join('; ')),
-		...(run.height === null ? blankPair : lengthPair(run.height, units)),
-		text(run.hold ? m.sheets_hold() : sourceWords(run.source)),
+		run.height === null ? blank : text(formatLength(run.height, { units })),
 		weight(piece.grams, units),
 		tickBox,
-		text(run.note)
+		text(
+			[run.hold ? m.sheets_hold() : sourceWords(run.source), run.note].filter(Boolean).join('; ')
+		)
 	];
 }
 

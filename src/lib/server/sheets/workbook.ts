@@ -86,7 +86,9 @@ function addSheet(book: ExcelJS.Workbook, name: string, spec: SheetSpec, of: Wor
 	const headerRow = addHeaderBlock(sheet, spec);
 	sheet.views = [{ state: 'frozen', xSplit: 0, ySplit: headerRow }];
 	sheet.pageSetup.printTitlesRow = `1:${headerRow}`;
-	spec.rows.forEach((row) => addRow(sheet, row));
+	spec.rows.forEach((row) => {
+		addRow(sheet, row).height = rowHeight(row, spec.columns);
+	});
 	if (spec.totals) addTotals(sheet, spec.totals);
 	const last = sheet.rowCount;
 	for (const note of spec.notes ?? []) addWide(sheet, note, spec.columns);
@@ -182,6 +184,13 @@ const linesOf = (shown: string, width: number): number =>
 		.split('\n')
 		.reduce((lines, line) => lines + Math.max(1, Math.ceil(line.length / (width * 1.05))), 0);
 
+/** High enough for a gloved hand's pencil (9 mm once fitted to the page), and for the longest wrapped text. */
+const rowHeight = (cells: readonly Cell[], columns: readonly Column[]): number =>
+	Math.max(
+		26,
+		...cells.map(({ value }, at) => 15 * linesOf(String(value ?? ''), columns[at]?.width ?? 10))
+	);
+
 function addRow(sheet: ExcelJS.Worksheet, cells: readonly Cell[]): ExcelJS.Row {
 	const row = sheet.addRow([]);
 	cells.forEach((cell, index) => {
@@ -189,7 +198,11 @@ function addRow(sheet: ExcelJS.Worksheet, cells: readonly Cell[]): ExcelJS.Row {
 		// Strings and numbers only: an object could be taken for a formula or a link.
 		target.value = cell.value;
 		target.numFmt = cell.format;
-		target.alignment = { horizontal: cell.align, vertical: 'top', wrapText: cell.align === 'left' };
+		target.alignment = {
+			horizontal: cell.align,
+			vertical: 'middle',
+			wrapText: cell.align === 'left'
+		};
 		target.border = { bottom: { style: 'hair' } };
 		if (cell.bold) target.font = { bold: true };
 	});

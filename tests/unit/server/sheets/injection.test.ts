@@ -67,8 +67,8 @@ describe('text that looks like something else', () => {
 			await trimListWorkbook(sampleSnapshot({ elevations, leftOut: [], changes: [] }))
 		);
 		const [row] = records(book.worksheets[0]!);
-		expect(row!['Note']).toBe(typed);
-		expect(row!['Unit']).toBe(typed);
+		expect(row!['Verified; note']).toBe(`field verified; ${typed}`);
+		expect(row!['Unit and run']).toBe(`${typed} N01`);
 		for (const sheet of book.worksheets)
 			sheet.eachRow((each) => each.eachCell((cell) => expect(cell.formula).toBeUndefined()));
 	});

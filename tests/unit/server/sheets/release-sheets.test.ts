@@ -57,12 +57,12 @@ describe('cut sheet', () => {
 	it('puts the text of a length beside its number, and a fraction format that shows it exactly', async () => {
 		const sheet = tab(await readWorkbook(await cutSheetWorkbook(snapshot)), 'HF ST24-SG31');
 		const row = sheet.getRow(headerRowOf(sheet) + 1);
-		expect(row.getCell(9).value).toBe(`8'-3 5/16"`);
-		expect(row.getCell(10).value).toBe(99.3125);
-		expect(row.getCell(10).numFmt).toBe('# ??/16');
+		expect(row.getCell(8).value).toBe(`8'-3 5/16"`);
+		expect(row.getCell(9).value).toBe(99.3125);
+		expect(row.getCell(9).numFmt).toBe('# ??/16');
 		// The rack offcut lies on a 64th, so its format does too.
-		expect(row.getCell(3).value).toBe(`8'-5 13/64"`);
-		expect(row.getCell(4).numFmt).toBe('# ??/64');
+		expect(row.getCell(3).value).toBeCloseTo(101 + 13 / 64, 9);
+		expect(row.getCell(3).numFmt).toBe('# ??/64');
 	});
 
 	it('prints job, elevation, profile, material, colour code, revision, date, viewpoint, lap, kerf, squaring, hold and cautions', async () => {
@@ -102,7 +102,7 @@ describe('trim list', () => {
 			Laps: 'goes under N01-1 by 4"',
 			'Left end': 'joint',
 			'Right end': 'open',
-			Verified: 'field verified'
+			'Verified; note': 'field verified'
 		});
 		expect(rows[1]).toMatchObject({ Laps: 'laps over N01-2 by 4"', 'Left end': 'closed, folded' });
 		const pieces = snapshot.elevations[0]!.runs.flatMap((run) => run.pieces);
