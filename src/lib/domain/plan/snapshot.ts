@@ -84,6 +84,8 @@ export interface SnapshotStick {
 	readonly squaringHook: Length;
 	readonly squaringFar: Length;
 	readonly left: Length;
+	/** Revision under which cutting of this stick began: it is finished as it was, not cut again. */
+	readonly begunUnder?: string;
 	readonly cuts: readonly SnapshotCut[];
 }
 

@@ -1,4 +1,4 @@
-import { and, desc, eq, type SQL } from 'drizzle-orm';
+import { and, desc, eq, sql, type SQL } from 'drizzle-orm';
 import type { Queryable } from '../db/client';
 import { jobs } from '../db/schema/jobs';
 import { ledger } from '../db/schema/metal';
@@ -45,3 +45,27 @@ export function listLedger(
 		.orderBy(desc(ledger.id))
 		.all();
 }
+
+/** The planned entries of one release, as they were written. */
+export const listReleaseLedger = (db: Queryable, shopId: string, releaseId: string) =>
+	db
+		.select()
+		.from(ledger)
+		.where(
+			and(eq(ledger.shopId, shopId), eq(ledger.releaseId, releaseId), eq(ledger.basis, 'planned'))
+		)
+		.all();
+
+/** What the releases of a job set aside, by profile, material and account: the terms of the identity. */
+export const sumPlannedLedger = (db: Queryable, shopId: string, jobId: string) =>
+	db
+		.select({
+			profileId: ledger.profileId,
+			materialId: ledger.materialId,
+			account: ledger.account,
+			lengthNm: sql<number>`sum(${ledger.lengthNm})`
+		})
+		.from(ledger)
+		.where(and(eq(ledger.shopId, shopId), eq(ledger.jobId, jobId), eq(ledger.basis, 'planned')))
+		.groupBy(ledger.profileId, ledger.materialId, ledger.account)
+		.all();

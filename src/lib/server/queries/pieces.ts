@@ -100,3 +100,15 @@ export const findPieces = (db: Queryable, shopId: string, ids: readonly string[]
 		.from(pieces)
 		.where(and(eq(pieces.shopId, shopId), inArray(pieces.id, [...ids])))
 		.all();
+
+export const setJobRevision = (
+	tx: Queryable,
+	shopId: string,
+	jobId: string,
+	revision: string
+): void =>
+	void tx
+		.update(jobs)
+		.set({ revision })
+		.where(and(eq(jobs.shopId, shopId), eq(jobs.id, jobId)))
+		.run();

@@ -1,17 +1,33 @@
-import { and, asc, desc, eq, inArray, isNull, max, sql } from 'drizzle-orm';
+import { and, asc, desc, eq, inArray, isNull, max, notInArray, or, sql } from 'drizzle-orm';
 import type { Queryable } from '../db/client';
 import { materials, profiles } from '../db/schema/catalog';
+import { jobs } from '../db/schema/jobs';
 import { claims, metal } from '../db/schema/metal';
 import { users } from '../db/schema/people';
-import { pieces, planGroups, plannedCuts, plannedSticks, plans } from '../db/schema/plans';
+import {
+	pieces,
+	planGroups,
+	plannedCuts,
+	plannedSticks,
+	plans,
+	releases
+} from '../db/schema/plans';
 
 export type PlanRow = typeof plans.$inferSelect;
 export type PlanGroupRow = typeof planGroups.$inferSelect;
 export type PlannedStickRow = typeof plannedSticks.$inferSelect;
 export type PlannedCutRow = typeof plannedCuts.$inferSelect;
 
-/** Offcuts on the rack that no release has claimed. */
-export const listFreeOffcuts = (db: Queryable, shopId: string) =>
+/**
+ * Offcuts on the rack that a plan of this job may use: those that no release has claimed, and those its own
+ * releases claimed for sticks that nobody has begun.
+ */
+export const listFreeOffcuts = (
+	db: Queryable,
+	shopId: string,
+	jobId: string,
+	begunStickIds: readonly string[]
+) =>
 	db
 		.select({
 			id: metal.id,
@@ -24,12 +40,16 @@ export const listFreeOffcuts = (db: Queryable, shopId: string) =>
 		})
 		.from(metal)
 		.leftJoin(claims, eq(claims.metalId, metal.id))
+		.leftJoin(releases, eq(releases.id, claims.releaseId))
 		.where(
 			and(
 				eq(metal.shopId, shopId),
 				eq(metal.kind, 'offcut'),
 				eq(metal.state, 'on hand'),
-				isNull(claims.metalId)
+				or(
+					isNull(claims.metalId),
+					and(eq(releases.jobId, jobId), notInArray(claims.stickId, [...begunStickIds]))
+				)
 			)
 		)
 		.orderBy(asc(metal.label))
@@ -154,3 +174,89 @@ export const updatePlanState = (
 		.set({ state, version: version + 1 })
 		.where(and(eq(plans.shopId, shopId), eq(plans.id, planId), eq(plans.version, version)))
 		.run().changes === 1;
+
+/** Puts a plan's state without asking for a version: for what a release does to the plans before it. */
+export const supersedePlan = (tx: Queryable, shopId: string, planId: string): void =>
+	void tx
+		.update(plans)
+		.set({ state: 'superseded', version: sql`${plans.version} + 1` })
+		.where(and(eq(plans.shopId, shopId), eq(plans.id, planId)))
+		.run();
+
+/** Who holds each of these lengths of metal: job, revision and person, by metal id. */
+export const listClaims = (db: Queryable, shopId: string, metalIds: readonly string[]) =>
+	db
+		.select({
+			metalId: claims.metalId,
+			stickId: claims.stickId,
+			label: metal.label,
+			jobId: jobs.id,
+			job: jobs.number,
+			revision: releases.revision,
+			by: users.name
+		})
+		.from(claims)
+		.innerJoin(metal, eq(metal.id, claims.metalId))
+		.innerJoin(releases, eq(releases.id, claims.releaseId))
+		.innerJoin(jobs, eq(jobs.id, releases.jobId))
+		.leftJoin(users, eq(users.id, claims.claimedBy))
+		.where(and(eq(claims.shopId, shopId), inArray(claims.metalId, [...metalIds])))
+		.all();
+
+/** These lengths of metal that are still on hand. */
+export const listOnHand = (db: Queryable, shopId: string, metalIds: readonly string[]) =>
+	db
+		.select({ id: metal.id, label: metal.label, actualNm: metal.actualNm })
+		.from(metal)
+		.where(
+			and(eq(metal.shopId, shopId), inArray(metal.id, [...metalIds]), eq(metal.state, 'on hand'))
+		)
+		.all();
+
+/** Full lengths on hand that no release has claimed, the oldest first. */
+export const listFreeLengths = (db: Queryable, shopId: string) =>
+	db
+		.select({
+			id: metal.id,
+			stockLengthId: metal.stockLengthId,
+			actualNm: metal.actualNm,
+			usableNm: metal.usableNm
+		})
+		.from(metal)
+		.leftJoin(claims, eq(claims.metalId, metal.id))
+		.where(
+			and(
+				eq(metal.shopId, shopId),
+				eq(metal.kind, 'stick'),
+				eq(metal.state, 'on hand'),
+				isNull(claims.metalId)
+			)
+		)
+		.orderBy(asc(metal.createdAt), asc(metal.label))
+		.all();
+
+/** @throws when one of them is claimed already: the unique index has one winner. */
+export const insertClaims = (
+	tx: Queryable,
+	rows: readonly (typeof claims.$inferInsert)[]
+): void => {
+	for (const some of chunks(rows)) tx.insert(claims).values(some).run();
+};
+
+/** Gives back what a superseded release claimed for sticks that nobody has begun. */
+export const releaseClaims = (
+	tx: Queryable,
+	shopId: string,
+	releaseId: string,
+	begunStickIds: readonly string[]
+): void =>
+	void tx
+		.delete(claims)
+		.where(
+			and(
+				eq(claims.shopId, shopId),
+				eq(claims.releaseId, releaseId),
+				notInArray(claims.stickId, [...begunStickIds])
+			)
+		)
+		.run();

@@ -20,7 +20,3 @@ export function begunSticks(
 		sticks.set(stickId, [...(sticks.get(stickId) ?? []), pieceId]);
 	return new Map([...sticks].filter(([, pieces]) => pieces.some((id) => reached.has(id))));
 }
-
-/** The pieces on those sticks. */
-export const begunPieceIds = (db: Queryable, shopId: string, jobId: string): ReadonlySet<string> =>
-	new Set([...begunSticks(db, shopId, jobId).values()].flat());

@@ -45,6 +45,8 @@ export interface JobPieces {
 	readonly stock: readonly PlannableStock[];
 	readonly runs: readonly PreparedRun[];
 	readonly leftOut: readonly LeftOut[];
+	/** Elevations of the job that have runs by us, chosen or not. */
+	readonly elevationIds: readonly string[];
 	/** Rows that no earlier plan made; they are inserted with the plan that uses them. */
 	readonly newPieces: readonly PieceRow[];
 }
@@ -79,13 +81,15 @@ export function prepareJobPieces(
 	const book = openPieceBook(db, shop.id, job, now);
 	const runs: PreparedRun[] = [];
 	const leftOut: LeftOut[] = [];
-	for (const row of listPlannableRuns(db, shopId, jobId)) {
+	const rows = listPlannableRuns(db, shopId, jobId);
+	for (const row of rows) {
 		if (choice.elevationIds && !choice.elevationIds.includes(row.elevation.id)) continue;
 		const reason = divideRow(row, job, shop, stock, choice);
 		if (typeof reason === 'string') leftOut.push(leaveOut(row, reason));
 		else runs.push(...copiesOf(row, reason, book));
 	}
-	return { job, shop, stock, runs, leftOut, newPieces: book.made };
+	const elevationIds = [...new Set(rows.map((row) => row.elevation.id))];
+	return { job, shop, stock, runs, leftOut, elevationIds, newPieces: book.made };
 }
 
 const leaveOut = (row: PlannableRun, reason: string): LeftOut => ({

@@ -11,7 +11,7 @@ import { listFreeOffcuts, type FreeOffcut } from '../queries/plans';
 import type { PieceRow } from '../queries/pieces';
 import { rulesOf } from './division-rules';
 import { endKey, pairOf, prepareJobPieces, type JobPieces } from './job-pieces';
-import { begunPieceIds } from './begun-sticks';
+import { begunSticks } from './begun-sticks';
 
 /** One profile in one material, ready to pack. */
 export interface GroupRequest {
@@ -45,8 +45,9 @@ export function preparePlan(
 ): PreparedPlan | undefined {
 	const prepared = prepareJobPieces(db, shopId, jobId, settings, now);
 	if (!prepared) return undefined;
-	const begun = begunPieceIds(db, shopId, jobId);
-	const offcuts = settings.useOffcuts ? listFreeOffcuts(db, shopId) : [];
+	const sticks = begunSticks(db, shopId, jobId);
+	const begun = new Set([...sticks.values()].flat());
+	const offcuts = settings.useOffcuts ? listFreeOffcuts(db, shopId, jobId, [...sticks.keys()]) : [];
 	return {
 		prepared,
 		settings,
