@@ -20,6 +20,24 @@ export const ACCESS: Readonly<Record<string, Readonly<Record<string, Rule>>>> = 
 	'/(auth)/reset-password': { GET: 'public', 'POST ?/default': 'public' },
 	'/(auth)/reset-password/[token]': { GET: 'public', 'POST ?/default': 'public' },
 	'/(auth)/accept-invite/[token]': { GET: 'public', 'POST ?/default': 'public' },
+	'/(app)/people': {
+		GET: 'people.manage',
+		'POST ?/invite': 'people.manage',
+		'POST ?/withdraw': 'people.manage',
+		'POST ?/roles': 'people.manage',
+		'POST ?/remove': 'people.manage'
+	},
+	'/(app)/account': {
+		GET: 'signed in',
+		'POST ?/name': 'signed in',
+		'POST ?/password': 'signed in',
+		'POST ?/endSession': 'signed in',
+		'POST ?/endOthers': 'signed in',
+		'POST ?/theme': 'signed in',
+		'POST ?/shop': 'signed in'
+	},
+	'/(app)/settings': { GET: 'settings.read', 'POST ?/default': 'settings.write' },
+	'/(app)/history': { GET: 'history.read' },
 
 	// jobs and takeoff
 	'/(app)/jobs': { GET: 'jobs.read' },

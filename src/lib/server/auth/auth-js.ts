@@ -19,12 +19,13 @@ class SignInRefused extends CredentialsSignin {
 
 const credentials = (event: RequestEvent) =>
 	Credentials({
-		credentials: { email: {}, password: { type: 'password' } },
-		authorize: async ({ email, password }) => {
+		credentials: { email: {}, password: { type: 'password' }, shopId: {} },
+		authorize: async ({ email, password, shopId }) => {
 			const checked = await checkSignIn(getDatabase(), {
 				email: String(email ?? ''),
 				password: String(password ?? ''),
-				address: event.getClientAddress()
+				address: event.getClientAddress(),
+				shopId: String(shopId ?? '')
 			});
 			if (!checked.ok) throw new SignInRefused(checked.sentence);
 			return { id: checked.userId, shopId: checked.shopId };
@@ -91,10 +92,9 @@ async function untilRedirect(work: () => unknown): Promise<void> {
 /** Signs in and sets the cookie; the sentence of the refusal otherwise. */
 export async function signIn(
 	event: RequestEvent,
-	email: string,
-	password: string
+	given: { email: string; password: string; shopId?: string }
 ): Promise<string | null> {
-	const fields = { providerId: 'credentials', email, password, redirectTo: '/' };
+	const fields = { providerId: 'credentials', shopId: '', ...given, redirectTo: '/' };
 	try {
 		await untilRedirect(() => auth.signIn(eventWith(event, fields)));
 	} catch (cause) {

@@ -11,3 +11,9 @@ export function requireContext(locals: App.Locals): Context {
 /** For what depends on a permission inside a route, e.g. prices on a shared page. */
 export const may = (context: Context, permission: Permission): boolean =>
 	context.permissions.has(permission);
+
+/** The session of a signed-in request, for what a person does to their own sessions. */
+export function requireSession(locals: App.Locals): string {
+	if (!locals.sessionId) error(401, 'Sign in first.');
+	return locals.sessionId;
+}

@@ -20,6 +20,17 @@ const addresses = new RateLimiterMemory({
 	duration: LONGEST_WAIT_SECONDS
 });
 
+const resets = new RateLimiterMemory({
+	keyPrefix: 'resets',
+	points: 3,
+	duration: REMEMBERED_SECONDS
+});
+const resetAddresses = new RateLimiterMemory({
+	keyPrefix: 'reset addresses',
+	points: 30,
+	duration: REMEMBERED_SECONDS
+});
+
 /** An account is slowed only for the address that guesses, so that nobody can lock somebody else out. */
 const keyOf = (email: string, address: string): string => `${address} ${email}`;
 
@@ -45,4 +56,19 @@ export async function countFailure(email: string, address: string): Promise<void
 
 export async function forgetFailures(email: string, address: string): Promise<void> {
 	await failures.delete(keyOf(email, address));
+}
+
+export function waitSentence(seconds: number): string {
+	const minutes = Math.ceil(seconds / 60);
+	const wait = seconds < 60 ? `${seconds} seconds` : `${minutes} minute${minutes === 1 ? '' : 's'}`;
+	return `Too many tries; the next one is accepted in ${wait}.`;
+}
+
+/** Three links an hour for one account, thirty for one address: nobody's letter box is flooded. */
+export async function mayAskForReset(email: string, address: string): Promise<boolean> {
+	const [own, from] = await Promise.all([
+		resets.penalty(email),
+		resetAddresses.penalty(address)
+	]);
+	return own.consumedPoints <= 3 && from.consumedPoints <= 30;
 }

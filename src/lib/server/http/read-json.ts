@@ -3,8 +3,13 @@ import { problemJson, type FieldProblem } from './problem';
 
 export type Read<T> = { ok: true; value: T } | { ok: false; response: Response };
 
-const received = (input: unknown): string =>
-	input === undefined ? 'nothing' : JSON.stringify(input).slice(0, 60);
+/** Passwords and links' tokens are never repeated, not even to the person who typed them. */
+const SECRET = /password|token/i;
+
+function received(field: string, input: unknown): string {
+	if (input === undefined) return 'nothing';
+	return SECRET.test(field) ? 'a text kept secret' : JSON.stringify(input).slice(0, 60);
+}
 
 /**
  * Each issue of a zod schema as one sentence: which field, what was read, what is accepted. An issue that
@@ -19,7 +24,7 @@ export function zodProblems(failure: z.ZodError, body?: unknown): FieldProblem[]
 			(at, key) => (at as Record<PropertyKey, unknown> | undefined)?.[key],
 			body
 		);
-		return { field, sentence: `${field}: read ${received(read)}; ${issue.message}.` };
+		return { field, sentence: `${field}: read ${received(field, read)}; ${issue.message}.` };
 	});
 }
 

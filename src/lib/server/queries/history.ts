@@ -1,4 +1,4 @@
-import { and, desc, eq, lt, type SQL } from 'drizzle-orm';
+import { and, asc, desc, eq, lt, type SQL } from 'drizzle-orm';
 import type { Queryable } from '../db/client';
 import { history, users } from '../db/schema/people';
 
@@ -44,11 +44,18 @@ export function appendHistory(tx: Queryable, actor: Actor, entry: HistoryEntry):
 export function listHistory(
 	db: Queryable,
 	shopId: string,
-	options: { jobId?: string; entity?: string; beforeId?: number; limit?: number } = {}
+	options: {
+		jobId?: string;
+		entity?: string;
+		userId?: string;
+		beforeId?: number;
+		limit?: number;
+	} = {}
 ) {
 	const where: SQL[] = [eq(history.shopId, shopId)];
 	if (options.jobId) where.push(eq(history.jobId, options.jobId));
 	if (options.entity) where.push(eq(history.entity, options.entity));
+	if (options.userId) where.push(eq(history.userId, options.userId));
 	if (options.beforeId) where.push(lt(history.id, options.beforeId));
 	return db
 		.select({
@@ -65,4 +72,24 @@ export function listHistory(
 		.orderBy(desc(history.id))
 		.limit(options.limit ?? 100)
 		.all();
+}
+
+/** Kinds of things and people that the shop's history speaks of. */
+export function historyFilters(db: Queryable, shopId: string) {
+	const entities = db
+		.select({ entity: history.entity })
+		.from(history)
+		.where(eq(history.shopId, shopId))
+		.groupBy(history.entity)
+		.orderBy(asc(history.entity))
+		.all();
+	const people = db
+		.select({ id: users.id, name: users.name })
+		.from(history)
+		.innerJoin(users, eq(users.id, history.userId))
+		.where(eq(history.shopId, shopId))
+		.groupBy(users.id)
+		.orderBy(asc(users.name))
+		.all();
+	return { entities: entities.map((row) => row.entity), people };
 }

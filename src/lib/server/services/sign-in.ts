@@ -1,5 +1,5 @@
 import { hashPassword, isOutdated, verifyPassword } from '../auth/password';
-import { countFailure, forgetFailures, secondsToWait } from '../auth/sign-in-limiter';
+import { countFailure, forgetFailures, secondsToWait, waitSentence } from '../auth/sign-in-limiter';
 import type { Database } from '../db/client';
 import { log } from '../log';
 import { findUserByEmail, listShopsOf, normaliseEmail, setPasswordHash } from '../queries/people';
@@ -9,6 +9,8 @@ export interface Credentials {
 	readonly password: string;
 	/** Where the request came from, for the limiter. */
 	readonly address: string;
+	/** The shop to begin with, if the person belongs to it; otherwise their first. */
+	readonly shopId?: string;
 }
 
 export type SignIn =
@@ -20,11 +22,6 @@ const WRONG =
 
 const refuse = (sentence: string): SignIn => ({ ok: false, sentence });
 
-function waitSentence(seconds: number): string {
-	const wait = seconds < 60 ? `${seconds} seconds` : `${Math.ceil(seconds / 60)} minutes`;
-	return `Too many tries; the next one is accepted in ${wait}.`;
-}
-
 /**
  * Checks an address and password. An unknown address, a wrong password, a disabled person and one without a
  * shop are answered alike, in words and in work done.
@@ -35,7 +32,8 @@ export async function checkSignIn(db: Database, given: Credentials): Promise<Sig
 	if (wait > 0) return refuse(waitSentence(wait));
 	const user = findUserByEmail(db, email);
 	const right = await verifyPassword(user?.passwordHash ?? null, given.password);
-	const shop = user && right && user.disabledAt === null ? listShopsOf(db, user.id)[0] : undefined;
+	const shops = user && right && user.disabledAt === null ? listShopsOf(db, user.id) : [];
+	const shop = shops.find(({ id }) => id === given.shopId) ?? shops[0];
 	if (!user || !shop) {
 		await countFailure(email, given.address);
 		log.warn({ event: 'sign-in refused', userId: user?.id ?? null }, 'sign-in refused');

@@ -16,7 +16,7 @@ export const actions: Actions = {
 		const form = await readForm(event.request, signInForm);
 		if (!form.ok) return fail(400, { problems: form.problems, entered: form.entered });
 		const { email, password, next } = form.value;
-		const refusal = await signIn(event, email, password);
+		const refusal = await signIn(event, { email, password });
 		if (refusal !== null)
 			return fail(400, {
 				problems: [{ field: 'email', sentence: refusal }],
