@@ -22,6 +22,7 @@ export default defineConfig({
 				test: {
 					name: 'node',
 					environment: 'node',
+					env: { LOG_LEVEL: 'silent', AUTH_SECRET: 'a secret for tests only, long enough' },
 					include: ['tests/{unit,property,reference}/**/*.test.ts'],
 					exclude: ['tests/**/*.svelte.test.ts'],
 					testTimeout: 60_000,

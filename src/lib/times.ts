@@ -17,7 +17,9 @@ function formatFor(timeZone: string): Intl.DateTimeFormat {
  * browsers differ in the spaces they put in.
  */
 export const formatTime = (at: number, timeZone: string): string =>
-	formatFor(timeZone).format(at).replace(/\u202f/g, ' ');
+	formatFor(timeZone)
+		.format(at)
+		.replace(/\u202f/g, ' ');
 
 /** Whether this is a zone that times can be shown in. */
 export function isTimeZone(name: string): boolean {

@@ -4,7 +4,9 @@ const ROLE_WORDS = ['estimator', 'shop lead', 'purchaser', 'installer', 'owner']
 const roles = z
 	.array(z.enum(ROLE_WORDS, `accepted is ${ROLE_WORDS.join(', ')}`), 'accepted is one role or more')
 	.min(1, 'accepted is one role or more');
-const id = z.string('accepted is a person of this shop').max(64, 'accepted is a person of this shop');
+const id = z
+	.string('accepted is a person of this shop')
+	.max(64, 'accepted is a person of this shop');
 const email = z
 	.string('accepted is an e-mail address')
 	.trim()

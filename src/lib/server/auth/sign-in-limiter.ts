@@ -66,9 +66,6 @@ export function waitSentence(seconds: number): string {
 
 /** Three links an hour for one account, thirty for one address: nobody's letter box is flooded. */
 export async function mayAskForReset(email: string, address: string): Promise<boolean> {
-	const [own, from] = await Promise.all([
-		resets.penalty(email),
-		resetAddresses.penalty(address)
-	]);
+	const [own, from] = await Promise.all([resets.penalty(email), resetAddresses.penalty(address)]);
 	return own.consumedPoints <= 3 && from.consumedPoints <= 30;
 }

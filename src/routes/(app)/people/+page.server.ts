@@ -20,15 +20,16 @@ export const load: PageServerLoad = ({ locals, url }) => ({
 export const actions: Actions = {
 	invite: async ({ locals, request }) => {
 		const form = await readForm(request, inviteForm);
-		if (!form.ok) return fail(400, { ...NOBODY, problems: form.problems, email: form.entered.email ?? '' });
+		if (!form.ok)
+			return fail(400, { ...NOBODY, problems: form.problems, email: form.entered.email ?? '' });
 		const outcome = invitePerson(requireContext(locals), form.value);
-		if (!outcome.ok)
-			return fail(400, { ...NOBODY, ...form.value, problems: [outcome.problem] });
+		if (!outcome.ok) return fail(400, { ...NOBODY, ...form.value, problems: [outcome.problem] });
 		redirect(303, '/people?done=invited');
 	},
 	withdraw: async ({ locals, request }) => {
 		const form = await readForm(request, withdrawForm);
-		if (!form.ok) return fail(400, { ...NOBODY, problems: form.problems, email: form.entered.email ?? '' });
+		if (!form.ok)
+			return fail(400, { ...NOBODY, problems: form.problems, email: form.entered.email ?? '' });
 		if (!withdrawInvitation(requireContext(locals), form.value.id)) notFound('open invitation');
 		redirect(303, '/people?done=withdrawn');
 	},
@@ -48,7 +49,8 @@ export const actions: Actions = {
 	},
 	remove: async ({ locals, request }) => {
 		const form = await readForm(request, removeForm);
-		if (!form.ok) return fail(400, { ...NOBODY, problems: form.problems, email: form.entered.email ?? '' });
+		if (!form.ok)
+			return fail(400, { ...NOBODY, problems: form.problems, email: form.entered.email ?? '' });
 		const change = removePerson(requireContext(locals), form.value.id);
 		if (change.kind === 'missing') notFound('person');
 		if (change.kind !== 'done') return fail(400, roleRefusal(form.value.id, change));

@@ -5,7 +5,9 @@ import { readForm } from '$lib/server/http/read-form';
 import { isResetOpen, resetPassword } from '$lib/server/services/reset-password';
 import type { Actions, PageServerLoad } from './$types';
 
-export const load: PageServerLoad = ({ params }) => ({ open: isResetOpen(params.token, Date.now()) });
+export const load: PageServerLoad = ({ params }) => ({
+	open: isResetOpen(params.token, Date.now())
+});
 
 export const actions: Actions = {
 	default: async (event) => {
