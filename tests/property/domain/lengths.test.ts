@@ -26,7 +26,7 @@ function forEachStep(step: Length, to: Length, check: (of: Length) => void): num
 }
 
 describe('print and read back', () => {
-	it('LEN-10: every 1/64 in to 40 ft, in feet and inches and in inches alone', () => {
+	it('LEN-6: every 1/64 in to 40 ft, in feet and inches and in inches alone', () => {
 		const count = forEachStep(SIXTY_FOURTH, feet(40), (of) => {
 			mustReadBack(formatLength(of, { units: 'imperial' }), 'imperial', of);
 			mustReadBack(formatInches(of), 'imperial', of);
@@ -34,14 +34,14 @@ describe('print and read back', () => {
 		expect(count).toBe(40 * 12 * 64 + 1);
 	});
 
-	it('LEN-10: every 1/64 in to 40 ft with primes, read in a metric job', () => {
+	it('LEN-6: every 1/64 in to 40 ft with primes, read in a metric job', () => {
 		const count = forEachStep(SIXTY_FOURTH, feet(40), (of) =>
 			mustReadBack(formatLength(of, { units: 'imperial', style: 'prime' }), 'metric', of)
 		);
 		expect(count).toBe(30_721);
 	});
 
-	it('LEN-10: every 0.1 mm to 12 m', () => {
+	it('LEN-6: every 0.1 mm to 12 m', () => {
 		const tenth = length(100_000);
 		const count = forEachStep(tenth, millimetres(12_000), (of) =>
 			mustReadBack(formatLength(of, { units: 'metric' }), 'metric', of)
@@ -49,7 +49,7 @@ describe('print and read back', () => {
 		expect(count).toBe(120_001);
 	});
 
-	it('LEN-10, LEN-11: any nanometre, either sign, either system, any precision', () => {
+	it('LEN-6, LEN-7: any nanometre, either sign, either system, any precision', () => {
 		const anyLength = fc
 			.integer({ min: -1_000_000_000_000, max: 1_000_000_000_000 })
 			.map((nm) => length(nm));
@@ -65,7 +65,7 @@ describe('print and read back', () => {
 		);
 	});
 
-	it('LEN-9: any text at all is read or refused, never thrown at', () => {
+	it('LEN-5: any text at all is read or refused, never thrown at', () => {
 		const text = fc.oneof(
 			fc.string({ maxLength: 80 }),
 			fc.stringMatching(/^[0-9 .,'"/+\-a-z½⅜″′]{0,70}$/)

@@ -1,6 +1,6 @@
 /**
  * Exact printing of lengths, the inverse of `parseLength`: for every length and style
- * `parseLength(formatLength(x)) = x` (LEN-10). What does not lie on the tape's marks, or on the coarser
+ * `parseLength(formatLength(x)) = x` (LEN-6). What does not lie on the tape's marks, or on the coarser
  * `precision`, is never hidden: it follows as a residue, `8'-4 3/16" +1/64"` or `8'-4 3/8" +0.12 mm`.
  */
 import { FOOT, INCH, MILLIMETRE, SIXTY_FOURTH, length, type Length } from './length';

@@ -12,7 +12,7 @@
  *
  * Terms go from larger to smaller units of one system; each after the first is less than one of the unit
  * before it; only the last has a part. A bare number is inches or millimetres by the job's system; a bare
- * number after feet is inches. Rules LEN-1 to LEN-9.
+ * number after feet is inches. Rules LEN-2 to LEN-5.
  */
 import Fraction from 'fraction.js';
 import { fail, ok, type Problem, type Result } from '../result';

@@ -78,7 +78,7 @@ function gapTooSmall(run: RunToDivide, n: number): Problem | null {
 		kind: 'run.gap',
 		where: `Gap of ${run.mark}`,
 		received: written(run)(run.joint.gap),
-		accepted: `at least ${written(run)(rest)}, which the last gap gives up to the cut precision`
+		accepted: `at least the cut precision ${written(run)(run.precision)}, which the last gap may give up`
 	};
 }
 

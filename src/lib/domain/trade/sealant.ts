@@ -42,5 +42,5 @@ export interface CartridgeRule {
 export function cartridgesFor(beadLength: number, rule: CartridgeRule): number {
 	const feet = (beadLength / INCH / 12) * (1 + rule.wastePercent / 100);
 	// A hair of floating dust must not cost a cartridge: a ten-thousandth of one is below any nozzle's rest.
-	return Math.ceil(feet / feetPerCartridge(rule.bead, rule.ounces) - 1e-4);
+	return Math.max(0, Math.ceil(feet / feetPerCartridge(rule.bead, rule.ounces) - 1e-4));
 }

@@ -26,7 +26,7 @@ describe('formatLength', () => {
 		[ZERO, `0"`],
 		[inches(-100), `-8'-4"`],
 		[OFF_GRID, `8'-4" +0.12 mm`]
-	])('LEN-10: prints %d nm as %s', (of, text) => {
+	])('LEN-6: prints %d nm as %s', (of, text) => {
 		expect(formatLength(of, { units: 'imperial' })).toBe(text);
 	});
 
@@ -37,11 +37,11 @@ describe('formatLength', () => {
 		[1, '0.000001 mm'],
 		[0, '0 mm'],
 		[-500_000, '-0.5 mm']
-	])('LEN-10: prints %d nm as %s in a metric job', (of, text) => {
+	])('LEN-6: prints %d nm as %s in a metric job', (of, text) => {
 		expect(formatLength(length(of), { units: 'metric' })).toBe(text);
 	});
 
-	it('LEN-11: shows what lies between the shop’s marks as a residue, never hides it', () => {
+	it('LEN-7: shows what lies between the shop’s marks as a residue, never hides it', () => {
 		const format = { units: 'imperial', precision: SIXTEENTH } as const;
 		expect(formatLength(sixtyFourths(13), format)).toBe(`3/16" +1/64"`);
 		expect(formatLength(sixtyFourths(64 * 96 + 3), format)).toBe(`8'-0" +3/64"`);
@@ -51,20 +51,20 @@ describe('formatLength', () => {
 		expect(formatLength(millimetres(2549), half)).toBe('2549 mm');
 	});
 
-	it('LEN-10: uses primes for display and straight marks for what is copied', () => {
+	it('LEN-6: uses primes for display and straight marks for what is copied', () => {
 		expect(formatLength(sixtyFourths(64 * 175 + 12), { units: 'imperial', style: 'prime' })).toBe(
 			'14′-7 3/16″'
 		);
 	});
 
-	it('LEN-10: prints inches alone for shops that think in inches', () => {
+	it('LEN-6: prints inches alone for shops that think in inches', () => {
 		expect(formatInches(sixtyFourths(64 * 175 + 12))).toBe(`175 3/16"`);
 		expect(formatInches(sixtyFourths(48))).toBe(`3/4"`);
 		expect(formatInches(ZERO)).toBe(`0"`);
 		expect(formatInches(OFF_GRID)).toBe(`100" +0.12 mm`);
 	});
 
-	it('LEN-10: takes a length apart for columns that align on the fraction', () => {
+	it('LEN-6: takes a length apart for columns that align on the fraction', () => {
 		expect(lengthParts(sixtyFourths(64 * 175 + 12))).toEqual({
 			negative: false,
 			feet: 14,
@@ -86,11 +86,11 @@ describe('speakLength', () => {
 		[ZERO, '0 inches'],
 		[inches(-1), 'minus 1 inch'],
 		[OFF_GRID, '8 feet 4 inches plus 0.12 millimetres']
-	])('LEN-12: says %d nm as %s', (of, text) => {
+	])('LEN-8: says %d nm as %s', (of, text) => {
 		expect(speakLength(of, 'imperial')).toBe(text);
 	});
 
-	it('LEN-12: says metric lengths in millimetres', () => {
+	it('LEN-8: says metric lengths in millimetres', () => {
 		expect(speakLength(length(2_549_500_000), 'metric')).toBe('2549.5 millimetres');
 		expect(speakLength(millimetres(1), 'metric')).toBe('1 millimetre');
 	});

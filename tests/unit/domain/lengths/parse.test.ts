@@ -37,7 +37,7 @@ describe('parseLength', () => {
 		);
 	});
 
-	it('LEN-9: refuses a pasted page at once and quotes only its beginning', () => {
+	it('LEN-5: refuses a pasted page at once and quotes only its beginning', () => {
 		const page = `${'9'.repeat(200_000)} ${"' ".repeat(200_000)}`;
 		const before = performance.now();
 		const result = parseLength(page, reading());
@@ -45,7 +45,7 @@ describe('parseLength', () => {
 		expect(result.ok ? '' : result.problem.received.length).toBe(41);
 	});
 
-	it('LEN-8: says when a bare decimal may have been meant as feet', () => {
+	it('LEN-4: says when a bare decimal may have been meant as feet', () => {
 		expect(mayMeanFeet('8.4', 'imperial')).toBe(true);
 		expect(mayMeanFeet('8.4', 'metric')).toBe(false);
 		expect(mayMeanFeet('100.375', 'imperial')).toBe(false);

@@ -21,13 +21,13 @@ describe('rounding to a grid', () => {
 		[-5, -10, 0, -10],
 		[-6, -10, 0, -10],
 		[-10, -10, -10, -10]
-	])('LEN-13: %d goes down to %d, up to %d, nearest to %d', (of, down, up, nearest) => {
+	])('LEN-9: %d goes down to %d, up to %d, nearest to %d', (of, down, up, nearest) => {
 		expect(roundDownTo(length(of), GRID)).toBe(down);
 		expect(roundUpTo(length(of), GRID) + 0).toBe(up);
 		expect(roundNearestTo(length(of), GRID) + 0).toBe(nearest);
 	});
 
-	it('LEN-13: stays exact beyond 32 bits', () => {
+	it('LEN-9: stays exact beyond 32 bits', () => {
 		const of = length(LONGEST_LENGTH - 1);
 		expect(roundDownTo(of, length(396_875))).toBe(999_999_984_375);
 		expect(isMultipleOf(roundUpTo(of, length(396_875)), length(396_875))).toBe(true);
