@@ -33,6 +33,7 @@ export function checkCertificate(
 	const prices = readPrices(certificate, demand, faults);
 	const limits = readLimits(problem);
 	const weights = readWeights(certificate, limits, faults);
+	if (!isWhole(certificate.total)) faults.push('The total must be a whole number.');
 	if (!isWhole(certificate.K) || certificate.K < 1) faults.push('The divisor K must be 1 or more.');
 	if (faults.length > 0) return { costCents: null, faults };
 	const lengths = [...demand.keys()];
@@ -113,17 +114,38 @@ function checkWeights(
 	weights: ReadonlyMap<string, number>,
 	faults: string[]
 ): void {
-	let tight = 1n;
 	limits.forEach(({ id, cost, limit }, s) => {
 		const over = BigInt(values[s]!) - BigInt(K) * BigInt(cost);
-		if (limit === null) {
-			if (over > 0n) faults.push(`A pattern of ${id} is worth more than its price.`);
-			if (cost > 0) tight = larger(tight, ceilDivide(BigInt(values[s]!), BigInt(cost)));
-		} else if (limit > 0 && BigInt(weights.get(id) ?? 0) !== larger(over, 0n)) {
+		if (limit === null && over > 0n)
+			faults.push(`A pattern of ${id} is worth more than its price.`);
+		if (limit === null || limit === 0) return;
+		if (BigInt(weights.get(id) ?? 0) !== larger(over, 0n)) {
 			faults.push(`The weight of ${id} is not what its best pattern demands.`);
 		}
 	});
-	if (BigInt(K) !== tight) faults.push('The divisor K is not the least that the prices allow.');
+	checkDivisor(K, limits, values, weights, faults);
+}
+
+/**
+ * K is pinned, so that a change of it shows: by the weight of a priced stick that its limit makes scarce;
+ * otherwise it is the least whole number that all unlimited, or all sticks at all, allow.
+ */
+function checkDivisor(
+	K: number,
+	limits: readonly Limits[],
+	values: readonly number[],
+	weights: ReadonlyMap<string, number>,
+	faults: string[]
+): void {
+	if (limits.some(({ id, cost }) => cost > 0 && weights.has(id))) return;
+	const least = (of: (one: Limits) => boolean) =>
+		limits.reduce((most, one, s) => {
+			const counts = one.cost > 0 && one.limit !== 0 && of(one);
+			return counts ? larger(most, ceilDivide(BigInt(values[s]!), BigInt(one.cost))) : most;
+		}, 1n);
+	const pinned =
+		BigInt(K) === least((one) => one.limit === null) || BigInt(K) === least(() => true);
+	if (!pinned) faults.push('The divisor K is not the least that the prices allow.');
 }
 
 const larger = (a: bigint, b: bigint): bigint => (a > b ? a : b);
@@ -193,14 +215,15 @@ function slide(best: Float64Array, r: number, size: number, value: number, count
 	const kept: number[] = [];
 	let head = 0;
 	for (let j = 0; j < steps; j++) {
-		const here = best[r + j * size]! - j * value;
-		while (kept.length > head && kept[kept.length - 1]! <= here) {
+		const here = best[r + j * size]!;
+		if (head < at.length && at[head]! < j - count) head++;
+		// Within the window j − at ≤ count, so every sum stays below Σ d·u < 2⁵³.
+		while (at.length > head && kept.at(-1)! + (j - at.at(-1)!) * value <= here) {
 			kept.pop();
 			at.pop();
 		}
 		kept.push(here);
 		at.push(j);
-		if (at[head]! < j - count) head++;
-		best[r + j * size] = kept[head]! + j * value;
+		best[r + j * size] = kept[head]! + (j - at[head]!) * value;
 	}
 }

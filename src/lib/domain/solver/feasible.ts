@@ -36,6 +36,15 @@ export function findImpossible(problem: PackingProblem): Impossible[] {
 	return tooFew(problem, sticks);
 }
 
+/** The reason when limited sticks hold every piece alone, but not all of them together. */
+export function shortage(problem: PackingProblem): Impossible[] {
+	const [longest] = problem.pieces.filter((p) => p.count > 0).sort((a, b) => b.length - a.length);
+	if (!longest) return [];
+	const allowed = Math.max(0, ...rooms(problem).map((stick) => stick.room));
+	const remedy = 'make more lengths available, or add an unlimited stock length';
+	return [obstacle(longest, 'availability', longest.length, allowed, remedy)];
+}
+
 /** Pieces that only limited sticks hold, counted against how many those sticks can hold. */
 function tooFew(
 	problem: PackingProblem,

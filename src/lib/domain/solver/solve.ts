@@ -3,7 +3,7 @@ import { buildPlan, noPlan } from './build-plan';
 import { certify, materialPrices, type ProvenBound } from './certificate';
 import { dive } from './dive';
 import { enumeratePatterns } from './enumerate';
-import { findImpossible } from './feasible';
+import { findImpossible, shortage } from './feasible';
 import { bestGreedy } from './greedy';
 import { Knapsack } from './knapsack';
 import { Master, type Relaxation } from './master';
@@ -41,6 +41,8 @@ class Search {
 	#best: Use[] | null = null;
 	#bound: ProvenBound;
 	#exhausted = false;
+	/** True when limited stock cannot hold the pieces: shown by the relaxation or the search. */
+	#shortage = false;
 	readonly #table: Knapsack;
 	readonly #work: Work | null;
 
@@ -87,7 +89,8 @@ class Search {
 	answer(): PackingPlan {
 		const cancelled = this.options.shouldStop?.() ?? false;
 		if (this.#best === null) {
-			return noPlan(this.problem, 'stopped', [], this.#bound);
+			const shown = this.#shortage ? shortage(this.problem) : [];
+			return noPlan(this.problem, shown.length > 0 ? 'impossible' : 'stopped', shown, this.#bound);
 		}
 		const reason = this.#exhausted ? 'search' : cancelled ? 'cancelled' : 'time';
 		return buildPlan(this.problem, this.model, this.#best, this.#bound, reason);
@@ -97,10 +100,13 @@ class Search {
 		master.add(this.#firstPatterns());
 		const meets = (value: number, bound: number) => this.#meets(value, bound);
 		const root = master.relax(demand, this.#limits(), meets, master.sizePrices());
-		this.#certify(root);
+		this.#certify(root, master.scale);
 		this.#report('bound');
 		if (this.#closed()) return;
+		this.#shortage = root.converged && root.value === Infinity;
+		if (this.#shortage) return;
 		this.#dives(master, root);
+		if (this.#best === null) this.#anyPlan(master);
 		if (this.#closed() || this.#work!.over()) return;
 		this.#wholeNumbers(master, root);
 	}
@@ -119,6 +125,17 @@ class Search {
 				this.#limits()
 			);
 		}
+	}
+
+	/** Where limits are so tight that nothing else found a plan: any plan at all, over every pattern. */
+	#anyPlan(master: Master): void {
+		const none = this.model.items.map(() => 0);
+		const list = enumeratePatterns(this.model, none, Infinity, master.scale, 20_000, () =>
+			this.#work!.over()
+		);
+		const answer = solveWhole(this.model, list.patterns, Infinity, this.#work!, Infinity);
+		this.#offer(answer.uses, 'search');
+		this.#shortage = answer.uses === null && list.complete && answer.exhausted;
 	}
 
 	/** Every pattern a cheaper plan may use, then a whole-number programme over them. */
@@ -164,8 +181,8 @@ class Search {
 
 	#limits = (): number[] => this.model.bins.map((bin) => bin.limit);
 
-	#certify(root: Relaxation): void {
-		const bound = certify(this.model, root.prices, this.#table);
+	#certify(root: Relaxation, scale: number): void {
+		const bound = certify(this.model, root.prices, this.#table, scale);
 		if (bound.costCents > this.#bound.costCents) this.#bound = bound;
 	}
 

@@ -45,7 +45,7 @@ export function solveWhole(
 		{ rows, columns },
 		{
 			timeLimitMs: work.left(),
-			target: (target + model.step * 1e-3) / scale,
+			...(Number.isFinite(target) ? { target: (target + model.step * 1e-3) / scale } : {}),
 			shouldStop: () => work.over(),
 			seed: work.seed
 		}
