@@ -138,28 +138,31 @@ export interface Pasted {
 
 /**
  * Puts copied cells at the selection in one step. A single value fills the whole selection; more spills right
- * and down, and rows are added below where there are none. Columns beyond the last are left out.
+ * and down, and rows are added below where there are none. `columns` says where each copied column goes, when
+ * the copied block had headings; otherwise it goes on from the selected cell. What has no column is left out.
  */
 export function paste(
 	grid: Grid,
 	view: Rows,
 	area: Area,
 	block: readonly (readonly string[])[],
-	makeRow: (index: number) => Row
+	makeRow: (index: number) => Row,
+	columns?: readonly (Column | null)[]
 ): Pasted {
-	if (block.length === 1 && block[0]!.length === 1)
+	if (block.length === 1 && block[0]!.length === 1 && !columns)
 		return { grid: fillArea(grid, view, area, block[0]![0]!), dropped: 0, area };
 	const taken = block.slice(0, PASTE_LIMIT);
 	const missing = Math.max(0, area.from.row + taken.length - view.length);
 	const added = Array.from({ length: missing }, (_, index) => makeRow(index));
 	const targets = [...view.slice(area.from.row), ...added];
+	const into = columns ?? COLUMNS.slice(area.from.column);
 	const edits = new Map<string, Edit[]>(
-		taken.map((texts, index) => [targets[index]!.id, editsOf(targets[index]!.id, texts, area)])
+		taken.map((texts, index) => [targets[index]!.id, editsOf(targets[index]!.id, texts, into)])
 	);
 	const rows = insertAfter(grid.rows, view.at(-1)?.id, added).map((row) =>
 		withEdits(row, edits.get(row.id) ?? [])
 	);
-	const widest = Math.max(...taken.map((texts) => texts.length));
+	const widest = columns ? COLUMNS.length : Math.max(...taken.map((texts) => texts.length));
 	const to = {
 		row: area.from.row + taken.length - 1,
 		column: Math.min(COLUMNS.length, area.from.column + widest) - 1
@@ -171,9 +174,9 @@ export function paste(
 	};
 }
 
-const editsOf = (id: string, texts: readonly string[], area: Area): Edit[] =>
+const editsOf = (id: string, texts: readonly string[], into: readonly (Column | null)[]): Edit[] =>
 	texts.flatMap((text, index) => {
-		const column = COLUMNS[area.from.column + index];
+		const column = into[index];
 		return column ? [{ id, column, text: text.trim() }] : [];
 	});
 

@@ -109,6 +109,21 @@ const hasRuns = (elevation: Elevation): FieldProblem => ({
 	sentence: `Elevation ${elevation.code} still has runs; move or delete them first.`
 });
 
+/** Moves an elevation one place up or down. */
+export function moveElevation(
+	ctx: Context,
+	jobId: string,
+	id: string,
+	by: -1 | 1
+): Outcome<Elevation[]> {
+	const order = listElevations(ctx.db, ctx.shopId, jobId).map((elevation) => elevation.id);
+	const at = order.indexOf(id);
+	if (at < 0) return missing('elevation');
+	const to = Math.min(order.length - 1, Math.max(0, at + by));
+	order.splice(to, 0, ...order.splice(at, 1));
+	return changeElevations(ctx, jobId, { changes: [], order });
+}
+
 /** Adds a unit, or changes the one that bears the mark. */
 export function putUnit(ctx: Context, jobId: string, input: UnitInput): Outcome<Unit> {
 	return write(ctx.db, (tx) => {

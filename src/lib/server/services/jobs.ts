@@ -145,3 +145,6 @@ function tell(
 		...states
 	});
 }
+
+export const getJobOrDeleted = (ctx: Context, jobId: string): Job | undefined =>
+	findJob(ctx.db, ctx.shopId, jobId, { deleted: true });
