@@ -58,6 +58,8 @@ function piecesNeeded(run: RunToDivide): number | null {
 	const most = Math.min(MOST_PIECES, least + 2 * run.keepOut.length + 2);
 	for (let n = least; n <= most; n++) {
 		const frame = frameOf(run, n, limit);
+		// Each further piece needs more than it adds to the sum, so no greater n can help.
+		if (frame.lo.reduce((total, lo) => total + lo, 0) > frame.sum) return null;
 		if (canDivide(frame)) return n;
 	}
 	return null;

@@ -49,9 +49,9 @@ function without(ranges: readonly Range[], blocked: readonly Range[]): Range[] {
 /** Returns B_0…B_n of a frame; the frame can be divided when B_0 holds 0. */
 export function backwardSets({ lo, hi, sum, blocked }: Frame): readonly (readonly Range[])[] {
 	const n = lo.length;
-	const sets: Range[][] = new Array(n + 1);
+	const sets: Range[][] = Array.from({ length: n + 1 }, () => []);
 	sets[n] = [[sum, sum]];
-	for (let j = n - 1; j >= 0; j--) {
+	for (let j = n - 1; j >= 0 && sets[j + 1]!.length > 0; j--) {
 		const back = sets[j + 1]!.map(([from, to]) => [from - hi, to - lo[j]!] as const);
 		const stepped = lo[j]! > hi ? [] : merge(back);
 		sets[j] = j === 0 ? stepped : without(stepped, blocked[j - 1]!);
