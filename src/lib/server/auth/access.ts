@@ -77,6 +77,32 @@ export const ACCESS: Readonly<Record<string, Readonly<Record<string, Rule>>>> = 
 	},
 	'/api/v1/jobs/[jobId=id]/corners': { GET: 'jobs.read', POST: 'jobs.write' },
 
+	// plans and releases
+	'/(app)/jobs/[jobId=id]/plan': {
+		GET: 'plans.read',
+		'POST ?/start': 'plans.make',
+		'POST ?/cancel': 'plans.make'
+	},
+	'/(app)/jobs/[jobId=id]/plans/[planId=id]': {
+		GET: 'plans.read',
+		'POST ?/cut': 'plans.release',
+		'POST ?/buy': 'plans.release',
+		'POST ?/setAside': 'plans.make'
+	},
+	'/(app)/jobs/[jobId=id]/releases': { GET: 'plans.read' },
+	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]': { GET: 'sheets.read' },
+	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]/cut-sheet': { GET: 'sheets.read' },
+	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]/changes': { GET: 'sheets.read' },
+	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]/cut-sheet.xlsx': { GET: 'sheets.read' },
+	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]/waste.xlsx': { GET: 'plans.read' },
+	'/(app)/jobs/[jobId=id]/waste': { GET: 'plans.read' },
+	'/api/v1/solves': { POST: 'plans.make' },
+	'/api/v1/solves/[solveId=id]': { GET: 'plans.read' },
+	'/api/v1/solves/[solveId=id]/cancel': { POST: 'plans.make' },
+	'/api/v1/jobs/[jobId=id]/plans': { GET: 'plans.read' },
+	'/api/v1/plans/[planId=id]': { GET: 'plans.read' },
+	'/api/v1/what-if': { POST: 'plans.read' },
+
 	// home
 	'/(app)/home': { GET: 'signed in' }
 };

@@ -17,7 +17,13 @@ export type WorkerTask =
 			readonly quick?: boolean;
 			readonly cancel?: SharedArrayBuffer;
 	  }
-	| { readonly kind: 'problem'; readonly problem: unknown; readonly cancel?: SharedArrayBuffer };
+	| {
+			readonly kind: 'problem';
+			/** As it was sent, so that its decimals stay exact. */
+			readonly text: string;
+			readonly mostTimeMs: number;
+			readonly cancel?: SharedArrayBuffer;
+	  };
 
 /** What the worker tells while it works; plans come along so that a killed worker loses none. */
 export type WorkerMessage =

@@ -26,6 +26,8 @@ interface SolveContext {
 
 /** A worker that is silent this long after its time limit hangs, and is ended with its best plan kept. */
 const HUNG_AFTER_MS = 20_000;
+/** The longest that a problem sent to the API may ask for. */
+const PROBLEM_LIMIT_MS = 60_000;
 /** Progress is written at most this often: the page asks once a second. */
 const WRITE_EVERY_MS = 400;
 
@@ -79,7 +81,10 @@ export function startSolve(context: SolveContext): RunningSolve {
 }
 
 function taskOf(row: SolveRow): WorkerTask {
-	if (row.kind !== 'plan') return { kind: 'problem', problem: row.request };
+	if (row.kind !== 'plan') {
+		const { text } = row.request as { text: string };
+		return { kind: 'problem', text, mostTimeMs: PROBLEM_LIMIT_MS };
+	}
 	const { groups, settings } = row.request as PlanRequest;
 	const { timeLimitMs, seed } = settings;
 	return {
@@ -90,7 +95,8 @@ function taskOf(row: SolveRow): WorkerTask {
 	};
 }
 
-const limitOf = (task: WorkerTask): number => (task.kind === 'pack' ? task.timeLimitMs : 60_000);
+const limitOf = (task: WorkerTask): number =>
+	task.kind === 'pack' ? task.timeLimitMs : task.mostTimeMs;
 
 /** The end of the row; what it stores is judged before the transaction, so that the transaction is short. */
 function finish(

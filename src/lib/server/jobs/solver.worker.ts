@@ -1,8 +1,9 @@
 import type { MessagePort } from 'node:worker_threads';
 import { loadHighs } from '../../engines/highs';
+import { answerProblem, readProblemFile } from '../../domain/solver/problem-file';
 import type { LpEngine } from '../../domain/solver/engine';
 import { packGroups } from './pack-groups';
-import type { WorkerMessage, WorkerTask } from './protocol';
+import { isRaised, type WorkerMessage, type WorkerTask } from './protocol';
 
 let engine: Promise<LpEngine> | null = null;
 
@@ -18,10 +19,20 @@ export default async function work(input: {
 	const lp = await (engine ??= loadHighs());
 	const clock = () => performance.now();
 	try {
-		if (task.kind === 'pack')
-			packGroups(task, lp, clock, (message: WorkerMessage) => port.postMessage(message));
+		if (task.kind === 'problem') return answer(task, lp, clock);
+		packGroups(task, lp, clock, (message: WorkerMessage) => port.postMessage(message));
 		return null;
 	} finally {
 		port.close();
 	}
+}
+
+/** The one problem of the text, answered as the command line answers it. */
+function answer(
+	{ text, cancel, mostTimeMs }: Extract<WorkerTask, { kind: 'problem' }>,
+	engine: LpEngine,
+	clock: () => number
+) {
+	const shouldStop = () => (cancel ? isRaised(cancel) : false);
+	return answerProblem(readProblemFile(text)[0], 0, { engine, clock, shouldStop, mostTimeMs });
 }

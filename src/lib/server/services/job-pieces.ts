@@ -2,6 +2,7 @@ import { resolveRun } from '../../domain/takeoff/resolve-run';
 import type { DividedRun, RunToDivide } from '../../domain/takeoff/takeoff';
 import { toPieces, type TakeoffPiece } from '../../domain/takeoff/to-pieces';
 import type { Length } from '../../domain/lengths/length';
+import { formatLength } from '../../domain/lengths/format';
 import { describeProblem } from '../../domain/result';
 import { invariant } from '../../domain/invariant';
 import type { Queryable } from '../db/client';
@@ -56,7 +57,7 @@ export interface PieceChoice {
 	readonly elevationIds: readonly string[] | null;
 	readonly includeHolds: boolean;
 	/** Divides for another stick or lap than the rules say; for comparisons. */
-	readonly instead?: { readonly stickNm?: Length; readonly lapNm?: Length };
+	readonly instead?: { readonly nominalNm?: Length; readonly lapNm?: Length };
 }
 
 export const pairOf = (of: { profileId: string; materialId: string }): string =>
@@ -116,15 +117,20 @@ function divideRow(
 	if (row.run.hold && !choice.includeHolds)
 		return 'On hold: its length is not verified at the building yet.';
 	const mine = stock.filter((one) => pairOf(one) === pairOf(row.run));
-	const stickNm = choice.instead?.stickNm ?? standardStick(mine)?.usableNm;
-	if (stickNm === undefined)
-		return `No stock length is entered for profile ${row.profile.code} in ${row.material.code}.`;
+	const asked = choice.instead?.nominalNm;
+	const stick = asked ? mine.find((one) => one.nominalNm === asked) : standardStick(mine);
+	if (!stick) return noStock(row, job, asked);
 	const run = { ...row.run, lapNm: choice.instead?.lapNm ?? row.run.lapNm };
-	const rules = divisionRulesOf(shop, job, stickNm);
+	const rules = divisionRulesOf(shop, job, stick.usableNm);
 	const resolved = { ...resolveRun(run, row.profile, rules), units: job.units };
 	const taken = toPieces(resolved, row.run.count);
 	if (!taken.ok) return describeProblem(taken.problem);
 	return { resolved, divided: taken.value.divided, all: taken.value.pieces };
+}
+
+function noStock(row: PlannableRun, job: PlannableJob, asked: Length | undefined): string {
+	const which = asked ? ` of ${formatLength(asked, { units: job.units })}` : '';
+	return `No stock length${which} is entered for profile ${row.profile.code} in ${row.material.code}.`;
 }
 
 function copiesOf(row: PlannableRun, division: Division, book: PieceBook): PreparedRun[] {

@@ -81,7 +81,8 @@ export function digestOf(prepared: JobPieces): string {
 	return createHash('sha256').update(text).digest('base64url');
 }
 
-function groupsOf(
+/** The pieces as packing problems, one per profile and material. */
+export function groupsOf(
 	prepared: JobPieces,
 	settings: PlanSettings,
 	offcuts: readonly FreeOffcut[],
