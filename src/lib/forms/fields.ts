@@ -9,7 +9,7 @@ import { parseLength } from '../domain/lengths/parse';
 import type { UnitSystem } from '../domain/lengths/units';
 import { describeProblem, type Problem, type Result } from '../domain/result';
 import { isId } from './id';
-import { parseCents } from './money';
+import { parseCents } from '../domain/trade/money';
 
 type Refuse = (problem: Problem) => never;
 
@@ -134,3 +134,6 @@ export function refuseAt(ctx: z.RefinementCtx, path: PropertyKey[], problem: Pro
 	const sentence = describeProblem(problem);
 	ctx.addIssue({ code: 'custom', message: sentence, params: { sentence }, path });
 }
+
+/** A button that acts on the version that was read. */
+export const versionForm = z.object({ version: versionField });

@@ -2,18 +2,25 @@ import { z } from 'zod';
 import { formatLength } from '../domain/lengths/format';
 import type { Length } from '../domain/lengths/length';
 import type { UnitSystem } from '../domain/lengths/units';
+import { findMetal } from '../domain/trade/metals';
+import { fromPoundsPerSquareFoot, sheetWeight } from '../domain/trade/weight';
 import { m } from '../paraglide/messages';
-import { codeField, lengthField, readText, tickField, versionField, wordsField } from './fields';
+import {
+	codeField,
+	lengthField,
+	readText,
+	refuseAt,
+	tickField,
+	versionField,
+	wordsField
+} from './fields';
 import type { Result } from '../domain/result';
-
-/** One pound per square foot in grams per square metre: 453.59237 g over 0.09290304 m². */
-const POUND_PER_SQUARE_FOOT = 453.59237 / 0.09290304;
 
 /** Grams per square metre of what was typed: lb/ft² in an imperial shop, kg/m² in a metric one. */
 export function parseAreaWeight(text: string, where: string, units: UnitSystem): Result<number> {
 	const plain = text.trim().replace(',', '.');
 	const typed = /^(\d{1,3}(\.\d{1,6})?|\.\d{1,6})$/.test(plain) ? Number(plain) : NaN;
-	const value = Math.round(typed * (units === 'metric' ? 1000 : POUND_PER_SQUARE_FOOT));
+	const value = units === 'metric' ? Math.round(typed * 1000) : fromPoundsPerSquareFoot(typed);
 	if (value >= 1 && value <= 200_000) return { ok: true, value };
 	const accepted =
 		units === 'metric' ? 'kg per m², such as 2.783' : 'pounds per square foot, such as 0.57';
@@ -24,24 +31,57 @@ export function parseAreaWeight(text: string, where: string, units: UnitSystem):
 export const formatAreaWeight = (grams: number, units: UnitSystem): string =>
 	units === 'metric'
 		? String(grams / 1000)
-		: String(Number((grams / POUND_PER_SQUARE_FOOT).toFixed(4)));
+		: String(Number((grams / (453.59237 / 0.09290304)).toFixed(4)));
+
+/** Grams per square metre that metal and thickness suggest; null for a metal that is not in the table. */
+export function proposedWeight(metal: string, thickness: Length): number | null {
+	const known = findMetal(metal.trim().toLowerCase());
+	return known && thickness > 0 ? sheetWeight(thickness, known.density.value) : null;
+}
+
+const areaWeight = (where: string, units: UnitSystem) =>
+	readText<number | null>((text) =>
+		text.trim() === '' ? { ok: true, value: null } : parseAreaWeight(text, where, units)
+	);
+
+const shape = (units: UnitSystem) => ({
+	code: codeField(m.catalog_code()),
+	metal: wordsField(m.catalog_metal(), 40, 1),
+	thicknessNm: lengthField(m.catalog_thickness(), units),
+	gaugeLabel: wordsField(m.catalog_gauge(), 20),
+	finish: wordsField(m.catalog_finish(), 60, 1),
+	colourName: wordsField(m.catalog_colour(), 60),
+	colourCode: wordsField(m.catalog_colour_code(), 30),
+	/** Empty takes what metal and thickness suggest. */
+	gramsPerSquareMetre: areaWeight(m.catalog_weight_area(), units),
+	directional: tickField
+});
+
+type Weighed = { metal: string; thicknessNm: Length; gramsPerSquareMetre: number | null };
+
+function weigh<T extends Weighed>(
+	of: T,
+	ctx: z.RefinementCtx
+): T & { gramsPerSquareMetre: number } {
+	const grams = of.gramsPerSquareMetre ?? proposedWeight(of.metal, of.thicknessNm);
+	if (grams !== null) return { ...of, gramsPerSquareMetre: grams };
+	refuseAt(ctx, ['gramsPerSquareMetre'], {
+		kind: 'material.weight',
+		where: m.catalog_weight_area(),
+		received: '',
+		accepted: `a weight, since "${of.metal}" is not in the table of metals that proposes one`
+	});
+	return z.NEVER;
+}
 
 /** A material as a person fills it in. Gauge is a label; the thickness is what counts. */
-export const materialForm = (units: UnitSystem) =>
-	z.object({
-		code: codeField(m.catalog_code()),
-		metal: wordsField(m.catalog_metal(), 40, 1),
-		thicknessNm: lengthField(m.catalog_thickness(), units),
-		gaugeLabel: wordsField(m.catalog_gauge(), 20),
-		finish: wordsField(m.catalog_finish(), 60, 1),
-		colourName: wordsField(m.catalog_colour(), 60),
-		colourCode: wordsField(m.catalog_colour_code(), 30),
-		gramsPerSquareMetre: readText((text) => parseAreaWeight(text, m.catalog_weight_area(), units)),
-		directional: tickField
-	});
+export const materialForm = (units: UnitSystem) => z.object(shape(units)).transform(weigh);
 export const materialEditForm = (units: UnitSystem) =>
-	materialForm(units).extend({ version: versionField });
-export type MaterialInput = z.output<ReturnType<typeof materialForm>>;
+	z.object({ ...shape(units), version: versionField }).transform(weigh);
+export type MaterialInput = Omit<
+	z.output<ReturnType<typeof materialForm>>,
+	'gramsPerSquareMetre'
+> & { gramsPerSquareMetre: number };
 
 /** Decimal inches, as thickness is bought: `0.040"`; exact, falls back to the general form. */
 export function thicknessText(of: Length, units: UnitSystem): string {

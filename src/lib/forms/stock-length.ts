@@ -16,7 +16,7 @@ import {
 	versionField,
 	wholeField
 } from './fields';
-import { formatCents } from './money';
+import { typeCents } from '../domain/trade/money';
 
 const shape = (units: UnitSystem) => ({
 	profileId: idField(m.catalog_profile()),
@@ -71,11 +71,11 @@ export const stockLengthTexts = (of: StockLengthInput, units: UnitSystem) => ({
 	supplierId: of.supplierId ?? '',
 	nominalNm: of.nominalNm > 0 ? formatLength(of.nominalNm, { units }) : '',
 	usableNm: of.usableNm > 0 ? formatLength(of.usableNm, { units }) : '',
-	priceCents: of.priceCents > 0 ? formatCents(of.priceCents) : '',
+	priceCents: of.priceCents > 0 ? typeCents(of.priceCents) : '',
 	pricedOn: of.pricedOn,
 	available: of.available === null ? '' : String(of.available),
 	bundleSize: String(of.bundleSize),
-	bundlePriceCents: of.bundlePriceCents === null ? '' : formatCents(of.bundlePriceCents),
+	bundlePriceCents: of.bundlePriceCents === null ? '' : typeCents(of.bundlePriceCents),
 	standard: of.standard ? 'on' : ''
 });
 export const newStockLength = (today: string): StockLengthInput => ({

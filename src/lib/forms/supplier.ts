@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import { m } from '../paraglide/messages';
 import { centsField, readText, versionField, wholeField, wordsField } from './fields';
-import { formatCents } from './money';
+import { typeCents } from '../domain/trade/money';
 
 const email = (where: string) =>
 	readText((text) => {
@@ -33,8 +33,8 @@ export const supplierTexts = (of: SupplierInput) => ({
 	name: of.name,
 	email: of.email,
 	phone: of.phone,
-	minimumOrderCents: formatCents(of.minimumOrderCents),
-	freightCents: formatCents(of.freightCents),
+	minimumOrderCents: typeCents(of.minimumOrderCents),
+	freightCents: typeCents(of.freightCents),
 	leadDays: String(of.leadDays)
 });
 export const NEW_SUPPLIER: SupplierInput = {

@@ -103,6 +103,52 @@ export const ACCESS: Readonly<Record<string, Readonly<Record<string, Rule>>>> = 
 	'/api/v1/plans/[planId=id]': { GET: 'plans.read' },
 	'/api/v1/what-if': { POST: 'plans.read' },
 
+	// catalog and rack
+	'/(app)/profiles': { GET: 'catalog.read' },
+	'/(app)/profiles/new': {
+		GET: 'catalog.write',
+		'POST ?/save': 'catalog.write',
+		'POST ?/draw': 'catalog.write'
+	},
+	'/(app)/profiles/[profileId=id]': {
+		GET: 'catalog.read',
+		'POST ?/save': 'catalog.write',
+		'POST ?/draw': 'catalog.write',
+		'POST ?/archive': 'catalog.write',
+		'POST ?/restore': 'catalog.write'
+	},
+	'/(app)/materials': { GET: 'catalog.read' },
+	'/(app)/materials/new': { GET: 'catalog.write', 'POST ?/default': 'catalog.write' },
+	'/(app)/materials/[materialId=id]': {
+		GET: 'catalog.read',
+		'POST ?/save': 'catalog.write',
+		'POST ?/archive': 'catalog.write',
+		'POST ?/restore': 'catalog.write'
+	},
+	'/(app)/stock': { GET: 'prices.read' },
+	'/(app)/stock/new': { GET: 'prices.write', 'POST ?/default': 'prices.write' },
+	'/(app)/stock/[stockLengthId=id]': {
+		GET: 'prices.read',
+		'POST ?/save': 'prices.write',
+		'POST ?/archive': 'prices.write',
+		'POST ?/restore': 'prices.write'
+	},
+	'/(app)/suppliers': { GET: 'prices.read' },
+	'/(app)/suppliers/new': { GET: 'prices.write', 'POST ?/default': 'prices.write' },
+	'/(app)/suppliers/[supplierId=id]': {
+		GET: 'prices.read',
+		'POST ?/save': 'prices.write',
+		'POST ?/archive': 'prices.write',
+		'POST ?/restore': 'prices.write'
+	},
+	'/(app)/rack': { GET: 'rack.read' },
+	'/(app)/rack/new': { GET: 'rack.write', 'POST ?/default': 'rack.write' },
+	'/(app)/rack/[metalId=id]': {
+		GET: 'rack.read',
+		'POST ?/correct': 'rack.write',
+		'POST ?/scrap': 'rack.write'
+	},
+
 	// home
 	'/(app)/home': { GET: 'signed in' }
 };

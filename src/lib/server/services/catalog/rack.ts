@@ -103,7 +103,8 @@ function standing(metal: ListedMetal, field: string): FieldProblem[] {
 	return [];
 }
 
-const settle = (input: MetalInput) => ({
+/** What a correction sets; an empty usable length is all of it, empty squaring is none. */
+export const settleMeasures = (input: MetalInput) => ({
 	actualNm: input.actualNm,
 	usableNm: input.usableNm ?? input.actualNm,
 	squaringHookNm: input.squaringHookNm ?? ZERO,
@@ -112,13 +113,17 @@ const settle = (input: MetalInput) => ({
 	batch: input.batch
 });
 
-const measuresAlike = (metal: ListedMetal, to: ReturnType<typeof settle>) =>
+const measuresAlike = (metal: ListedMetal, to: ReturnType<typeof settleMeasures>) =>
 	metal.actualNm === to.actualNm &&
 	metal.usableNm === to.usableNm &&
 	metal.squaringHookNm === to.squaringHookNm &&
 	metal.squaringFarNm === to.squaringFarNm;
 
-function correction(metal: ListedMetal, to: ReturnType<typeof settle>, reason: string): string {
+function correction(
+	metal: ListedMetal,
+	to: ReturnType<typeof settleMeasures>,
+	reason: string
+): string {
 	const said = [
 		metal.actualNm !== to.actualNm &&
 			`measured again: ${inWords(metal.actualNm)} is ${inWords(to.actualNm)}`,
@@ -130,11 +135,11 @@ function correction(metal: ListedMetal, to: ReturnType<typeof settle>, reason: s
 /** Corrects length, place or batch with a reason; claimed metal may be moved but not measured away. */
 export const correctMetal = (ctx: Context, at: At, input: MetalInput): Saved<ListedMetal> =>
 	updateRow(ctx, METAL, at, {
-		changes: () => settle(input),
+		changes: () => settleMeasures(input),
 		action: 'corrected',
-		tell: ({ before }) => correction(before, settle(input), input.reason),
+		tell: ({ before }) => correction(before, settleMeasures(input), input.reason),
 		check: ({ before }) => {
-			const alike = before.state === 'on hand' && measuresAlike(before, settle(input));
+			const alike = before.state === 'on hand' && measuresAlike(before, settleMeasures(input));
 			return alike ? [] : standing(before, 'actualNm');
 		},
 		also: ({ tx, before }) => {
