@@ -247,8 +247,14 @@ export function flatDraft(draft: ProfileDraft): Record<string, string> {
 }
 
 /** Returns the draft in short lines, for showing where two versions differ. */
-export function draftLines(draft: ProfileDraft): Record<string, string> {
-	const { legs, startHem, endHem, ends, materialId: _, ...rest } = draft;
+export function draftLines({
+	legs,
+	startHem,
+	endHem,
+	ends,
+	materialId: _figuresOnly,
+	...rest
+}: ProfileDraft): Record<string, string> {
 	const hem = ({ kind, width }: HemDraft) => (kind ? `${kind} ${width}` : '');
 	return {
 		...rest,

@@ -53,6 +53,8 @@ export function searchRack(context: Context, search: RackSearch): RackFound {
 	});
 	const problems =
 		read && !read.ok ? [{ field: 'atLeast', sentence: describeProblem(read.problem) }] : [];
-	// What was paid for it is nobody's business on the rack.
-	return { metal: found.map(({ costCents: _, ...row }) => row), problems, search };
+	return { metal: found.map(withoutCost), problems, search };
 }
+
+/** What was paid for a length is no business of the rack's pages. */
+export const withoutCost = ({ costCents: _cost, ...row }: ListedMetal) => row;

@@ -7,6 +7,7 @@ import { findMetal } from '$lib/server/queries/metal';
 import { listEntityHistory } from '$lib/server/queries/entity-history';
 import { listLedger } from '$lib/server/queries/ledger';
 import { correctMetal, scrapMetal, settleMeasures } from '$lib/server/services/catalog/rack';
+import { withoutCost } from '$lib/server/services/catalog/search-rack';
 import { unitsOf } from '$lib/server/services/catalog/units';
 import type { Actions, PageServerLoad } from './$types';
 
@@ -14,7 +15,7 @@ export const load: PageServerLoad = ({ locals, params }) => {
 	const context = requireContext(locals);
 	const found = findMetal(context.db, context.shopId, params.metalId);
 	if (!found) notFound('length of metal');
-	const { costCents: _, ...metal } = found;
+	const metal = withoutCost(found);
 	return {
 		metal,
 		history: listEntityHistory(context.db, context.shopId, metal.id),
