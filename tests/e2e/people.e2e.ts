@@ -59,7 +59,7 @@ test('an owner invites a person, who joins, is given another role and is removed
 	await theirs.getByLabel('Password').fill('a ladder against the wall');
 	await theirs.getByRole('button', { name: 'Join' }).click();
 	await expect(theirs).toHaveURL(/\/home/);
-	expect((await theirs.goto('/orders'))?.status()).toBe(403);
+	expect((await theirs.goto('/settings'))?.status()).toBe(403);
 	await theirs.goto(link);
 	await expect(theirs.getByText('This invitation was used')).toBeVisible();
 
