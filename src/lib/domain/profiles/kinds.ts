@@ -195,7 +195,7 @@ export const profileKinds: readonly ProfileKind[] = [
 				['kick', kick!, 0]
 			]),
 		closing: NOT_CLOSED,
-		joint: 'plate',
+		joint: 'lap',
 		lap: inches(3),
 		concealed: true
 	},

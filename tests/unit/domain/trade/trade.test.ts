@@ -1,10 +1,13 @@
 import { describe, expect, it } from 'vitest';
-import { feet, inches, length, ZERO } from '../../../../src/lib/domain/lengths/length';
+import { feet, inches, length, SIXTEENTH, ZERO } from '../../../../src/lib/domain/lengths/length';
 import { blanksAcross, sheetsFor } from '../../../../src/lib/domain/trade/blanks';
 import { contactCautions, runOffCautions } from '../../../../src/lib/domain/trade/contact';
 import { expansionJoints } from '../../../../src/lib/domain/trade/expansion';
 import { boxesFor, fastenersFor, fastenersOnRun } from '../../../../src/lib/domain/trade/fasteners';
 import { findMetal, METALS, metals } from '../../../../src/lib/domain/trade/metals';
+import { divideRun } from '../../../../src/lib/domain/takeoff/divide';
+import type { RunToDivide } from '../../../../src/lib/domain/takeoff/takeoff';
+import { expansionNeed, plateGapCaution } from '../../../../src/lib/domain/trade/moving-joints';
 import { cartridgesFor } from '../../../../src/lib/domain/trade/sealant';
 import { kelvinsInF, thermalMovement } from '../../../../src/lib/domain/trade/thermal';
 import {
@@ -58,6 +61,52 @@ describe('movement', () => {
 	it('TRD-4: a fixed interval halves a tail longer than half of it', () => {
 		const joints = expansionJoints(feet(115), feet(32), 'fixed interval');
 		expect(joints.map((at) => at / feet(1))).toEqual([32, 64, 96, 105.5]);
+	});
+});
+
+describe('moving joints', () => {
+	const open = { kind: 'open', allowance: ZERO } as const;
+	const run: RunToDivide = {
+		mark: 'N03',
+		face: feet(100),
+		left: open,
+		right: open,
+		joint: { kind: 'plate', gap: length(inches(1) / 4), plate: inches(6) },
+		choice: 'even',
+		limits: [{ kind: 'stock', length: feet(10) }],
+		minPiece: inches(24),
+		precision: SIXTEENTH,
+		keepOut: [],
+		fit: 'over'
+	};
+	const divide = (of: RunToDivide) => {
+		const result = divideRun(of);
+		if (!result.ok) throw new Error('unreachable');
+		return result.value;
+	};
+
+	it('TRD-4: joints that move count; fixed ones need expansion joints between them', () => {
+		const divided = divide(run);
+		expect(expansionNeed(run, divided, feet(32), 'moving')).toBeNull();
+		expect(expansionNeed(run, divided, feet(32), 'fixed')).toEqual({
+			longest: feet(100),
+			spacing: feet(32),
+			addAt: [feet(25), feet(50), feet(75)]
+		});
+		expect(expansionNeed(run, divided, feet(8), 'moving')?.addAt).toHaveLength(
+			divided.pieces.length
+		);
+	});
+
+	it('TRD-3: a gap below the movement of the longest piece warns', () => {
+		const divided = divide(run);
+		const longest = Math.max(...divided.pieces.map((piece) => piece.length));
+		expect(plateGapCaution(run, divided, 13_100, 120)).toBeNull();
+		expect(plateGapCaution(run, divided, 13_100, 180)?.movement).toBe(
+			thermalMovement(length(longest), 13_100, 180)
+		);
+		const lapped: RunToDivide = { ...run, joint: { kind: 'lap', overlap: inches(3) } };
+		expect(plateGapCaution(lapped, divide(lapped), 13_100, 180)).toBeNull();
 	});
 });
 
