@@ -42,6 +42,8 @@ const LETTER = 1;
 const A4 = 9;
 const FACTS_PER_ROW = 3;
 const THIN = { style: 'thin' } as const;
+const FONT = { name: 'Calibri', size: 11 } as const;
+const BOLD = { ...FONT, bold: true } as const;
 
 /** Tab names may not hold these, nor begin or end with an apostrophe, nor be longer than 31. */
 const tabName = (name: string): string =>
@@ -110,16 +112,17 @@ const pageSetup = (units: UnitSystem): Partial<ExcelJS.PageSetup> => ({
 /** Title, facts three to a row, cautions, and the header row of the table; returns that row's number. */
 function addHeaderBlock(sheet: ExcelJS.Worksheet, spec: SheetSpec): number {
 	const title = addWide(sheet, spec.title, spec.columns);
-	title.font = { bold: true, size: 14 };
+	title.getCell(1).font = { ...BOLD, size: 14 };
 	title.height = 21;
 	const spans = factSpans(spec.columns);
 	for (let at = 0; at < spec.facts.length; at += spans.length)
 		addFacts(sheet, spec.facts.slice(at, at + spans.length), spans);
 	for (const caution of spec.cautions) addWide(sheet, caution, spec.columns);
 	const header = sheet.addRow(spec.columns.map((column) => stored(column.header)));
+	header.height = 15 * Math.max(...spec.columns.map((of) => linesOf(of.header, of.width * 0.8)));
 	header.eachCell((cell) => {
 		cell.numFmt = '@';
-		cell.font = { bold: true };
+		cell.font = BOLD;
 		cell.alignment = { wrapText: true, vertical: 'bottom' };
 		cell.border = { bottom: { style: 'medium' }, top: THIN };
 	});
@@ -158,6 +161,7 @@ function addFacts(sheet: ExcelJS.Worksheet, facts: SheetSpec['facts'], spans: re
 		const cell = row.getCell(span.from);
 		cell.value = stored(shown);
 		cell.numFmt = '@';
+		cell.font = FONT;
 		cell.alignment = { wrapText: true, vertical: 'top' };
 		if (span.to > span.from) sheet.mergeCells(row.number, span.from, row.number, span.to);
 		lines = Math.max(lines, linesOf(shown, span.width));
@@ -171,6 +175,7 @@ function addWide(sheet: ExcelJS.Worksheet, value: string, columns: readonly Colu
 	const row = sheet.addRow([stored(shown)]);
 	const cell = row.getCell(1);
 	cell.numFmt = '@';
+	cell.font = FONT;
 	cell.alignment = { wrapText: true, vertical: 'top' };
 	if (columns.length > 1) sheet.mergeCells(row.number, 1, row.number, columns.length);
 	const width = columns.reduce((sum, column) => sum + column.width, 0);
@@ -204,14 +209,14 @@ function addRow(sheet: ExcelJS.Worksheet, cells: readonly Cell[]): ExcelJS.Row {
 			wrapText: cell.align === 'left'
 		};
 		target.border = { bottom: { style: 'hair' } };
-		if (cell.bold) target.font = { bold: true };
+		target.font = cell.bold ? BOLD : FONT;
 	});
 	return row;
 }
 
 function addTotals(sheet: ExcelJS.Worksheet, cells: readonly Cell[]): void {
 	addRow(sheet, cells).eachCell((cell) => {
-		cell.font = { bold: true };
+		cell.font = BOLD;
 		cell.border = { top: THIN, bottom: { style: 'medium' } };
 	});
 }
