@@ -67,3 +67,14 @@ export interface ActAnswer {
 	/** Why it was refused, or what a measure did; empty when there is nothing to say. */
 	readonly sentence: string;
 }
+
+/** The same acts posted by a plain form. */
+export const siteFittedForm = z.strictObject({
+	pieceIds: z.array(id).min(1).max(200),
+	done: z.enum(['yes', 'no']).transform((word) => word === 'yes')
+});
+export const siteMeasureForm = z.strictObject({
+	runId: id,
+	measure: z.enum(['field', 'check']),
+	typed
+});

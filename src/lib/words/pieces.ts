@@ -66,3 +66,7 @@ export function jointWords(
 			return joint.over === mark ? m.sheets_laps_over(named) : m.sheets_goes_under(named);
 		});
 }
+
+/** Returns what an end of a run is, before it is known how it is closed. */
+export const endKindWords = (kind: EndKind): string =>
+	kind === 'closed' ? m.sheets_end_closed() : ENDS[kind]();

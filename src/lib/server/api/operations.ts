@@ -1,6 +1,7 @@
 import { API as jobs } from './jobs';
-import type { ApiOperation } from './operation';
 import { API as plans } from './plans';
+import { API as site } from './site';
+import type { ApiOperation } from './operation';
 
 /** Every operation of the API; a test compares this list with the routes on disk. */
-export const OPERATIONS: readonly ApiOperation[] = [...jobs, ...plans];
+export const OPERATIONS: readonly ApiOperation[] = [...jobs, ...plans, ...site];

@@ -149,6 +149,22 @@ export const ACCESS: Readonly<Record<string, Readonly<Record<string, Rule>>>> = 
 		'POST ?/scrap': 'rack.write'
 	},
 
+	// site
+	'/(app)/site': { GET: 'site.read' },
+	'/(app)/site/[jobId=id]': { GET: 'site.read' },
+	'/(app)/site/[jobId=id]/[elevationId=id]': {
+		GET: 'site.read',
+		'POST ?/fitted': 'site.write',
+		'POST ?/measure': 'site.write',
+		'POST ?/holdTo': 'holds.accept'
+	},
+	'/site-kept': { GET: 'public' },
+	'/api/v1/site/[jobId=id]/[elevationId=id]': { GET: 'site.read' },
+	'/api/v1/site/acts': { POST: 'site.write' },
+	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]/trim-list': { GET: 'sheets.read' },
+	'/(app)/jobs/[jobId=id]/measure-sheet': { GET: 'sheets.read' },
+	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]/trim-list.xlsx': { GET: 'sheets.read' },
+
 	// home
 	'/(app)/home': { GET: 'signed in' }
 };

@@ -105,13 +105,11 @@ function heldRun(run: SiteRun, measures: ReturnType<typeof listSiteMeasures>): H
 		left: run.leftKind,
 		right: run.rightKind,
 		note: run.note,
-		measures: own.map(
-			({ kind, valueNm, takenBy, createdAt }): SiteMeasure => ({
-				kind: kind as SiteMeasure['kind'],
-				value: valueNm,
-				by: takenBy ?? '',
-				at: createdAt
-			})
-		)
+		measures: own.map(({ kind, valueNm, takenBy, createdAt }): SiteMeasure => ({
+			kind: kind as SiteMeasure['kind'],
+			value: valueNm,
+			by: takenBy ?? '',
+			at: createdAt
+		}))
 	};
 }

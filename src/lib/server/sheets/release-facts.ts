@@ -55,7 +55,10 @@ export function cuttingFacts({ rules, job }: ReleaseSnapshot): Fact[] {
 }
 
 /** Profile, material and colour code of a group. */
-export const groupFacts = ({ profile, material }: SnapshotGroup): Fact[] => [
+export const groupFacts = ({
+	profile,
+	material
+}: Pick<SnapshotGroup, 'profile' | 'material'>): Fact[] => [
 	[m.sheets_profile(), joined([profile.code, profile.name])],
 	[m.sheets_material(), joined([material.code, material.metal, material.gaugeLabel])],
 	[m.sheets_colour(), joined([material.finish, material.colourName, material.colourCode])]

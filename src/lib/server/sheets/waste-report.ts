@@ -131,7 +131,7 @@ const resolved = ({ header, width }: { header: string | (() => string); width: n
 	width
 });
 const groupCells = (group: WasteReportGroup): Cell[] =>
-	groupFacts(group as SnapshotGroup).map(([, value]) => mark(value));
+	groupFacts(group).map(([, value]) => mark(value));
 const total = (groups: readonly WasteReportGroup[], of: (group: WasteReportGroup) => number) =>
 	groups.reduce((sum, group) => sum + of(group), 0);
 
