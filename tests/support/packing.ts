@@ -47,7 +47,10 @@ export async function solveNow(
 	timeLimitMs = 30_000
 ): Promise<PackingPlan> {
 	const clock = () => performance.now();
-	return solve(problem, { engine: await highs(), clock, timeLimitMs, seed: 1 });
+	const onFailure = (error: unknown) => {
+		throw error;
+	};
+	return solve(problem, { engine: await highs(), clock, timeLimitMs, seed: 1, onFailure });
 }
 
 /** Seeded small problems with kerf, squaring, several stocks, limits and offcuts all mixed. */

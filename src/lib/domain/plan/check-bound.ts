@@ -14,8 +14,8 @@ interface Limits {
 }
 
 /** The grid of certificates: units of the gcd, halved until the table keeps within these sizes. */
-const MAX_CAPACITY = 200_000;
-const MAX_CELLS = 48_000_000;
+const MAX_CAPACITY = 2_000_000;
+const MAX_CELLS = 24_000_000;
 
 /**
  * Recomputes an integer dual certificate from the problem alone (SOLVER.md 3.4). For each stick s the

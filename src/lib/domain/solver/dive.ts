@@ -2,6 +2,8 @@ import { bestGreedy } from './greedy';
 import type { Master, Relaxation } from './master';
 import type { Model } from './model';
 import { costOf, type Pattern, type Use } from './pattern';
+import { packSequential } from './sequential';
+import { seeded } from './work';
 
 /** A dive's running state: what is fixed, what is still to be cut, which limited bins are left. */
 interface Depth {
@@ -35,6 +37,7 @@ export function dive(master: Master, start: Relaxation, rules: DiveRules): Use[]
 	while (!master.work.over()) {
 		if (!fixSome(master, depth, relaxation, rules)) break;
 		best = cheaper(model, best, finish(model, depth));
+		if (relaxation === start) best = cheaper(model, best, finishWell(master, depth, rules));
 		if (best && costOf(model, best) <= rules.target) break;
 		if (depth.rest.every((count) => count === 0)) break;
 		master.setRest(depth.rest, depth.left);
@@ -88,6 +91,18 @@ function finish(model: Model, depth: Depth): Use[] | null {
 	const bins = model.bins.map((bin, s) => ({ ...bin, limit: depth.left[s]! }));
 	const rest = bestGreedy({ ...model, bins }, depth.rest);
 	return rest === null ? null : [...depth.fixed, ...rest];
+}
+
+/** The rest after the first rounding is worth a better packing: it decides most ordinary jobs. */
+function finishWell(master: Master, depth: Depth, rules: DiveRules): Use[] | null {
+	const model = master.model;
+	const rest = packSequential(model, master.table, depth.rest, depth.left, {
+		target: rules.target - costOf(model, depth.fixed),
+		passes: 3,
+		random: seeded(master.work.seed),
+		over: master.work.over
+	});
+	return rest && [...depth.fixed, ...rest];
 }
 
 function cheaper(model: Model, a: Use[] | null, b: Use[] | null): Use[] | null {

@@ -11,6 +11,7 @@ import type { Model } from './model';
 export class Knapsack {
 	readonly #model: Model;
 	readonly #capacity: number;
+	#filled = 0;
 	readonly #f: Float64Array;
 	readonly #small: readonly number[];
 	readonly #large: readonly number[];
@@ -31,16 +32,29 @@ export class Knapsack {
 
 	/** Fills the table; returns V_s for every bin s. */
 	fill(values: ArrayLike<number>, demand: ArrayLike<number>): Float64Array {
+		this.fillUpTo(this.#capacity, values, demand);
+		return Float64Array.from(this.#model.bins, (bin) => this.#bestFor(bin.coarse).value);
+	}
+
+	/** The room that any bin still has beside one piece of an item. */
+	roomBeside = (item: number): number =>
+		Math.max(0, this.#capacity - this.#model.items[item]!.coarse);
+
+	/** Whether the filled part of the table answers for patterns around this item. */
+	answersFor = (item: number): boolean => this.roomBeside(item) <= this.#filled;
+
+	/** Fills only the part of the table up to a capacity: enough for patterns around a long piece. */
+	fillUpTo(capacity: number, values: ArrayLike<number>, demand: ArrayLike<number>): void {
 		this.#values = values;
 		this.#demand = demand;
+		this.#filled = capacity;
 		this.#rows = this.#splitRows();
-		const width = this.#capacity + 1;
+		const width = capacity + 1;
 		const bytes = Math.ceil(this.#rows.length / 8) * width;
 		if (this.#take.length < bytes) this.#take = new Uint8Array(bytes);
 		else this.#take.fill(0, 0, bytes);
-		this.#f.fill(0);
+		this.#f.fill(0, 0, width);
 		this.#rows.forEach((row, r) => this.#addRow(r, row.size, row.copies * values[row.item]!));
-		return Float64Array.from(this.#model.bins, (bin) => this.#bestFor(bin.coarse).value);
 	}
 
 	/** Counts by item of a best pattern of bin `bin` in the filled table. */
@@ -93,12 +107,9 @@ export class Knapsack {
 	#splitRows() {
 		const rows: { item: number; copies: number; size: number }[] = [];
 		for (const i of this.#small) {
-			if (!(this.#values[i]! > 0)) continue;
 			const size = this.#model.items[i]!.coarse;
-			let left = Math.min(
-				this.#demand[i]!,
-				size > 0 ? Math.floor(this.#capacity / size) : Infinity
-			);
+			if (!(this.#values[i]! > 0) || size > this.#filled) continue;
+			let left = Math.min(this.#demand[i]!, size > 0 ? Math.floor(this.#filled / size) : Infinity);
 			for (let copies = 1; left > 0; copies *= 2) {
 				const now = Math.min(copies, left);
 				rows.push({ item: i, copies: now, size: now * size });
@@ -111,9 +122,9 @@ export class Knapsack {
 	#addRow(r: number, size: number, value: number): void {
 		const f = this.#f;
 		const take = this.#take;
-		const base = (r >> 3) * (this.#capacity + 1);
+		const base = (r >> 3) * (this.#filled + 1);
 		const bit = 1 << (r & 7);
-		for (let c = this.#capacity; c >= size; c--) {
+		for (let c = this.#filled; c >= size; c--) {
 			const candidate = f[c - size]! + value;
 			if (candidate > f[c]!) {
 				f[c] = candidate;
@@ -123,7 +134,7 @@ export class Knapsack {
 	}
 
 	#backtrack(capacity: number, counts: Int32Array): void {
-		const width = this.#capacity + 1;
+		const width = this.#filled + 1;
 		let c = capacity;
 		for (let r = this.#rows.length - 1; r >= 0; r--) {
 			if ((this.#take[(r >> 3) * width + c]! & (1 << (r & 7))) === 0) continue;

@@ -54,8 +54,8 @@ export interface Model {
 }
 
 /** The table may have this many cells; above, it works on a grid coarser by a power of two. */
-const MAX_CELLS = 48_000_000;
-const MAX_CAPACITY = 200_000;
+const MAX_CELLS = 24_000_000;
+const MAX_CAPACITY = 2_000_000;
 
 export const gcd = (a: number, b: number): number => {
 	while (b !== 0) [a, b] = [b, a % b];

@@ -23,6 +23,8 @@ export interface SolveOptions {
 	readonly shouldStop?: () => boolean;
 	readonly onProgress?: (progress: SolveProgress) => void;
 	readonly seed?: number;
+	/** Told when a step failed by a defect; the plan found before it is still returned. */
+	readonly onFailure?: (error: unknown) => void;
 }
 
 /** The contract of every strategy: a plan with an honest status, whatever the problem; never throws. */

@@ -51,11 +51,19 @@ function onePass(
 	const rest = [...demand];
 	const left = [...limits];
 	const uses: Use[] = [];
+	let filled = false;
 	for (let longest = 0; ;) {
 		while (longest < rest.length && rest[longest] === 0) longest++;
 		if (longest === rest.length) return uses;
 		if (rules.over()) return null;
-		const pattern = bestAround(model, table, rest, left, values, longest);
+		// The table of the length before still serves while its pattern needs no piece that is used up.
+		const serves = filled && table.answersFor(longest);
+		let pattern = serves ? bestAround(model, table, rest, left, longest) : null;
+		if (pattern === null || usable(pattern, rest, left) < 1) {
+			table.fillUpTo(table.roomBeside(lookAhead(rest, longest)), values, rest);
+			filled = true;
+			pattern = bestAround(model, table, rest, left, longest);
+		}
 		if (pattern === null) return null;
 		const times = usable(pattern, rest, left);
 		uses.push({ pattern, times });
@@ -65,15 +73,22 @@ function onePass(
 	}
 }
 
+/** The item a few lengths on: the table is filled wide enough to serve until then. */
+function lookAhead(rest: readonly number[], from: number): number {
+	let item = from;
+	for (let i = from, seen = 0; i < rest.length && seen < 6; i++) {
+		if (rest[i]! > 0) [item, seen] = [i, seen + 1];
+	}
+	return item;
+}
+
 function bestAround(
 	model: Model,
 	table: Knapsack,
 	rest: readonly number[],
 	left: readonly number[],
-	values: Float64Array,
 	item: number
 ): Pattern | null {
-	table.fill(values, rest);
 	let bin = -1;
 	let best = -Infinity;
 	model.bins.forEach(({ capacity, cost }, s) => {

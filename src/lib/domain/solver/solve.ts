@@ -14,6 +14,9 @@ import { packSequential } from './sequential';
 import { solveWhole } from './whole-number';
 import { seeded, startWork, type Work } from './work';
 
+const FIRST_DIVES = 4;
+const MORE_DIVES = 24;
+
 /**
  * Packs the pieces into the fewest cents of stock that time allows and proves as much as it can.
  * Never throws; the status is `proven` only with a certificate in whole numbers.
@@ -31,13 +34,12 @@ export function solve(problem: PackingProblem, options: SolveOptions): PackingPl
 		search.run();
 	} catch (error) {
 		// An engine that fails loses its step, never the plan found before it.
-		search.failure = error;
+		options.onFailure?.(error);
 	}
 	return search.answer();
 }
 
 class Search {
-	failure: unknown = null;
 	#best: Use[] | null = null;
 	#bound: ProvenBound;
 	#exhausted = false;
@@ -105,17 +107,16 @@ class Search {
 		if (this.#closed()) return;
 		this.#shortage = root.converged && root.value === Infinity;
 		if (this.#shortage) return;
-		this.#dives(master, root);
+		this.#dives(master, root, 0, FIRST_DIVES);
 		if (this.#best === null) this.#anyPlan(master);
 		if (this.#closed() || this.#work!.over()) return;
 		this.#wholeNumbers(master, root);
 	}
 
-	/** Dives with different first choices, each from the relaxation at the root. */
-	#dives(master: Master, root: Relaxation): void {
-		const random = seeded(this.#work!.seed);
-		const attempts = 4;
-		for (let attempt = 0; attempt < attempts; attempt++) {
+	/** Dives with different choices, each from the relaxation at the root. */
+	#dives(master: Master, root: Relaxation, from: number, to: number): void {
+		const random = seeded(this.#work!.seed + from);
+		for (let attempt = from; attempt < to; attempt++) {
 			if (this.#closed() || this.#work!.over()) return;
 			const pick = () => (attempt < 2 ? 0 : Math.floor(random() * 3));
 			const rules = { target: this.#bound.costCents, pick, generate: attempt > 0 };
@@ -148,6 +149,9 @@ class Search {
 		const list = enumeratePatterns(model, prices, gap, master.scale, 20_000, () =>
 			this.#work!.over()
 		);
+		// A list too long to search is left to more dives, and then to the patterns that they found.
+		if (!list.complete) this.#dives(master, root, FIRST_DIVES, MORE_DIVES);
+		if (this.#closed() || this.#work!.over()) return;
 		const patterns = list.complete ? list.patterns : master.patterns;
 		const below = costOf(model, this.#best) - model.step;
 		const answer = solveWhole(model, patterns, below, this.#work!, this.#bound.costCents);
