@@ -113,3 +113,16 @@ function heldRun(run: SiteRun, measures: ReturnType<typeof listSiteMeasures>): H
 		}))
 	};
 }
+
+/** Elevations of a job that have runs on hold, each with those runs. */
+export function siteRunsOnHold(ctx: Context, jobId: string) {
+	const runs = listSiteRuns(ctx.db, ctx.shopId, jobId).filter((run) => run.hold);
+	return listSiteElevations(ctx.db, ctx.shopId, jobId)
+		.map(({ id, code, name }) => ({
+			id,
+			code,
+			name,
+			runs: runs.filter((run) => run.elevationId === id).map((run) => heldRun(run, []))
+		}))
+		.filter((elevation) => elevation.runs.length > 0);
+}
