@@ -14,7 +14,10 @@ import { parseCents } from '../domain/trade/money';
 type Refuse = (problem: Problem) => never;
 
 /** A field that is missing or not text counts as empty, so that nothing a browser sends is a surprise. */
-export const typedText = z.unknown().transform((value) => (typeof value === 'string' ? value : ''));
+export const typedText = z
+	.unknown()
+	.default('')
+	.transform((value) => (typeof value === 'string' ? value : ''));
 
 /** A field whose text a function reads; what it refuses becomes the field's problem. */
 export const readText = <T>(read: (text: string) => Result<T>) =>

@@ -66,7 +66,7 @@ class Reader {
 	}
 	choice<T extends string>(field: string, where: string, text: string, of: readonly T[]): T {
 		const found = of.find((each) => each === text);
-		if (!found) this.odd(field, where, text, of.join(', '));
+		if (found === undefined) this.odd(field, where, text, of.filter(Boolean).join(', '));
 		return found ?? of[0]!;
 	}
 	/** Hundredths of a degree. */
