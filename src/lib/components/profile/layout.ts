@@ -48,8 +48,8 @@ export interface Words {
 	readonly finished: string;
 }
 
-const CHARACTER = 7.4;
-const LINE_HEIGHT = 15;
+const CHARACTER = 8.4;
+const LINE_HEIGHT = 17;
 const TICK = 8;
 const TICK_STEP = 13;
 /** First dimension clear of the finish ticks, the next ones further out. */

@@ -7,7 +7,7 @@ import { drawingWords } from '../../../../src/lib/components/profile/words';
 import { findKind, profileKinds, shapeOf } from '../../../../src/lib/domain/profiles/kinds';
 
 const shape = (kind: string) => shapeOf(findKind(kind)!);
-const SHEET = { width: 560, height: 380, margin: { x: 120, y: 84 } };
+const SHEET = { width: 420, height: 330, margin: { x: 104, y: 70 } };
 
 describe('ProfileDrawing', () => {
 	it('dimensions every leg, marks bends and hems, and names the finished side', () => {
@@ -46,7 +46,7 @@ describe('ProfileDrawing', () => {
 		'keeps every dimension of a %s on the sheet and off the others',
 		(kind) => {
 			const { dimensions } = drawFull(shape(kind), SHEET, drawingWords('imperial'));
-			const boxes = dimensions.map(({ label }) => boxAround(label.at, label.text.length * 7.4, 15));
+			const boxes = dimensions.map(({ label }) => boxAround(label.at, label.text.length * 8.4, 17));
 			expect(boxes).toHaveLength(shape(kind).legs.length);
 			for (const [i, box] of boxes.entries()) {
 				expect(outside(box, SHEET.width, SHEET.height)).toBe(0);
