@@ -19,14 +19,14 @@ const isExported = (node: ts.Statement): boolean =>
 	(ts.getModifiers(node) ?? []).some((each) => each.kind === ts.SyntaxKind.ExportKeyword);
 
 /** Every name a module exports with the expression it stands for, when it has one. */
-export function exportsOf(file: string): Map<string, ts.Expression | undefined> {
-	const found = new Map<string, ts.Expression | undefined>();
+export function exportsOf(file: string): Map<string, ts.Node | undefined> {
+	const found = new Map<string, ts.Node | undefined>();
 	for (const node of parse(file).statements) {
 		if (ts.isVariableStatement(node) && isExported(node))
 			for (const { name, initializer } of node.declarationList.declarations)
 				found.set(name.getText(), initializer);
 		if (ts.isFunctionDeclaration(node) && isExported(node) && node.name)
-			found.set(node.name.text, undefined);
+			found.set(node.name.text, node);
 		if (ts.isExportDeclaration(node)) {
 			if (!node.exportClause || !ts.isNamedExports(node.exportClause))
 				throw new Error(`${file}: export * hides what the route answers to; name the exports`);
@@ -36,7 +36,7 @@ export function exportsOf(file: string): Map<string, ts.Expression | undefined> 
 	return found;
 }
 
-function unwrap(expression: ts.Expression): ts.Expression {
+function unwrap(expression: ts.Node): ts.Node {
 	return ts.isSatisfiesExpression(expression) ||
 		ts.isAsExpression(expression) ||
 		ts.isParenthesizedExpression(expression)
@@ -44,21 +44,23 @@ function unwrap(expression: ts.Expression): ts.Expression {
 		: expression;
 }
 
-/** Names of the form actions; actions that cannot be read from the source are a failure, never an omission. */
-function actionNames(file: string): string[] {
+/** The form actions by name; actions that cannot be read from the source are a failure, never an omission. */
+function actionsOf(file: string): Map<string, ts.Node> {
 	const found = exportsOf(file);
-	if (!found.has('actions')) return [];
+	if (!found.has('actions')) return new Map();
 	const value = found.get('actions');
 	const object = value && unwrap(value);
 	if (!object || !ts.isObjectLiteralExpression(object))
 		throw new Error(
 			`${file}: write \`export const actions = { … }\` so that its actions can be read`
 		);
-	return object.properties.map((property) => {
-		if (!property.name || ts.isComputedPropertyName(property.name))
-			throw new Error(`${file}: name each action; a spread or computed name cannot be read`);
-		return property.name.getText().replace(/^['"]|['"]$/g, '');
-	});
+	return new Map(
+		object.properties.map((property) => {
+			if (!property.name || ts.isComputedPropertyName(property.name))
+				throw new Error(`${file}: name each action; a spread or computed name cannot be read`);
+			return [property.name.getText().replace(/^['"]|['"]$/g, ''), property];
+		})
+	);
 }
 
 function keysOf(folder: string): [string, string][] {
@@ -67,7 +69,7 @@ function keysOf(folder: string): [string, string][] {
 	if (existsSync(at('+page.svelte')) || existsSync(at('+page.server.ts')))
 		keys.push(['GET', at('+page.svelte')]);
 	if (existsSync(at('+page.server.ts')))
-		for (const name of actionNames(at('+page.server.ts')))
+		for (const name of actionsOf(at('+page.server.ts')).keys())
 			keys.push([`POST ?/${name}`, at('+page.server.ts')]);
 	if (existsSync(at('+server.ts')))
 		for (const name of exportsOf(at('+server.ts')).keys())
@@ -86,4 +88,25 @@ export function entriesOnDisk(root = 'src/routes'): Entry[] {
 			return keysOf(folder).map(([key, file]) => ({ routeId, key, file }));
 		})
 		.sort((a, b) => `${a.routeId} ${a.key}`.localeCompare(`${b.routeId} ${b.key}`));
+}
+
+/** Names that a piece of source uses of what its file imports, with the module each comes from. */
+export function importsUsedBy(entry: Entry): { name: string; module: string }[] {
+	const [method, action] = entry.key.split(' ?/');
+	const node = action ? actionsOf(entry.file).get(action) : exportsOf(entry.file).get(method!);
+	const imported = new Map<string, { name: string; module: string }>();
+	for (const statement of parse(entry.file).statements) {
+		const bindings = ts.isImportDeclaration(statement) && statement.importClause?.namedBindings;
+		if (!bindings || !ts.isNamedImports(bindings)) continue;
+		const module = (statement.moduleSpecifier as ts.StringLiteral).text;
+		for (const { name, propertyName } of bindings.elements)
+			imported.set(name.text, { name: (propertyName ?? name).text, module });
+	}
+	const used = new Set<string>();
+	const visit = (each: ts.Node): void => {
+		if (ts.isIdentifier(each)) used.add(each.text);
+		each.forEachChild(visit);
+	};
+	node?.forEachChild(visit);
+	return [...imported].flatMap(([local, from]) => (used.has(local) ? [from] : []));
 }
