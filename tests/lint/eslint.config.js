@@ -100,7 +100,10 @@ export default ts.config(
 		languageOptions: { globals: { ...globals.browser, ...globals.node } },
 		rules: {
 			'no-undef': 'off',
-			'@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_' }],
+			'@typescript-eslint/no-unused-vars': [
+				'error',
+				{ argsIgnorePattern: '^_', varsIgnorePattern: '^_' }
+			],
 			'no-empty': ['error', { allowEmptyCatch: false }],
 			'svelte/no-at-html-tags': 'error',
 			// The product is served at the root of its host; there is no base path to resolve.
