@@ -73,3 +73,38 @@ export function priceOf(quantity: number, of: Sold): Purchase {
 		cents: bundles * bundleCents(of) + singles * of.priceCents
 	};
 }
+
+function reasonOf(need: BuyingNeed, quantity: number): BuyingReason {
+	if (quantity < need.needed) return 'no more to be had';
+	if (quantity === need.needed) return 'as needed';
+	return soldSingly(need) ? 'a bundle costs less' : 'whole bundles only';
+}
+
+/**
+ * Returns the cheapest way to buy one stock length by itself: as needed, or rounded up to whole bundles where
+ * those cost less or single lengths are not sold; of equal cost the fewer. Never more than may be had.
+ */
+export function cheapestLine(need: BuyingNeed): BuyingLine {
+	const most = need.available ?? Number.MAX_SAFE_INTEGER;
+	const upToBundle = Math.ceil(need.needed / need.bundleSize) * need.bundleSize;
+	const [exact, bundled] = [priceOf(need.needed, need), priceOf(upToBundle, need)];
+	const fits = (purchase: Purchase) => purchase.quantity <= most;
+	const best = [exact, bundled].filter(fits).sort((a, b) => a.cents - b.cents)[0];
+	const line = best ?? priceOf(wholeUpTo(most, need), need);
+	return {
+		...line,
+		stockLengthId: need.stockLengthId,
+		reason: reasonOf(need, line.quantity)
+	};
+}
+
+/** Returns the most lengths that may be bought when no more than `most` can be had. */
+const wholeUpTo = (most: number, of: Sold): number =>
+	soldSingly(of) ? most : Math.floor(most / of.bundleSize) * of.bundleSize;
+
+/** Returns the lines of one supplier, each bought as cheaply as by itself, and what is missing to the minimum. */
+export function lineByLine(needs: readonly BuyingNeed[], minimumCents: number): BuyingChoice {
+	const lines = needs.map(cheapestLine);
+	const goodsCents = lines.reduce((sum, line) => sum + line.cents, 0);
+	return { lines, goodsCents, belowMinimumCents: Math.max(0, minimumCents - goodsCents) };
+}

@@ -12,9 +12,9 @@ export interface ReleasedLengths {
 }
 
 /** What one job asks of one stock length. */
-export interface JobNeed {
-	readonly buy: ReleasedLengths | null;
-	readonly cut: ReleasedLengths | null;
+export interface JobNeed<T extends ReleasedLengths = ReleasedLengths> {
+	readonly buy: T | null;
+	readonly cut: T | null;
 	/** Whether the release to cut left runs out that are on hold. */
 	readonly leftOut: boolean;
 }
@@ -32,7 +32,7 @@ export const openLengths = (of: ReleasedLengths): number =>
  * supersedes the release to buy of the same job; while it leaves runs on hold out, the one with more still
  * open counts, so that metal bought ahead for those runs is neither forgotten nor bought twice.
  */
-export function countedRelease(of: JobNeed): ReleasedLengths | null {
+export function countedRelease<T extends ReleasedLengths>(of: JobNeed<T>): T | null {
 	if (!of.cut || !of.buy) return of.cut ?? of.buy;
 	return of.leftOut && openLengths(of.buy) > openLengths(of.cut) ? of.buy : of.cut;
 }
