@@ -111,6 +111,11 @@ export const orderSummary = z.object({
 	awaited: z.int(),
 	totalCents: money
 });
+export const ordersQuery = z.strictObject({
+	state: orderSummary.shape.state.optional(),
+	search: words(100).optional()
+});
+export const sentAnswer = z.object({ outboxId: z.string(), before: z.boolean() });
 export const ordersAnswer = z.object({ orders: z.array(orderSummary) });
 export const madeAnswer = z.object({
 	orders: z.array(z.object({ id: z.string(), number: z.int() }))

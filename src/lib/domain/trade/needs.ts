@@ -4,10 +4,7 @@ export interface ReleasedLengths {
 	readonly planned: number;
 	/** Whole percent bought on top. */
 	readonly marginPercent: number;
-	/**
-	 * Full lengths taken from the rack for it, cut or not: those that the release to cut has claimed; for a
-	 * release to buy, those that any release to cut of the job has.
-	 */
+	/** Full lengths on hand that the job's releases to cut have claimed for it, cut by now or not. */
 	readonly claimed: number;
 }
 

@@ -165,6 +165,31 @@ export const ACCESS: Readonly<Record<string, Readonly<Record<string, Rule>>>> = 
 	'/(app)/jobs/[jobId=id]/measure-sheet': { GET: 'sheets.read' },
 	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]/trim-list.xlsx': { GET: 'sheets.read' },
 
+	// buying
+	'/(app)/buy': { GET: 'orders.read', 'POST ?/order': 'orders.write' },
+	'/(app)/orders': { GET: 'orders.read' },
+	'/(app)/orders/[orderId=id]': {
+		GET: 'orders.read',
+		'POST ?/edit': 'orders.write',
+		'POST ?/send': 'orders.write',
+		'POST ?/resend': 'orders.write',
+		'POST ?/cancel': 'orders.write',
+		'POST ?/close': 'orders.write',
+		'POST ?/retry': 'orders.write'
+	},
+	'/(app)/orders/[orderId=id]/order.xlsx': { GET: 'orders.read' },
+	'/(app)/orders/[orderId=id]/receive': {
+		GET: 'orders.receive',
+		'POST ?/default': 'orders.receive'
+	},
+	'/(app)/mailbox': { GET: 'mailbox.read', 'POST ?/retry': 'mailbox.read' },
+	'/(app)/mailbox/[messageId=id]': { GET: 'mailbox.read' },
+	'/(app)/mailbox/[messageId=id]/attachments/[attachmentId=id]': { GET: 'mailbox.read' },
+	'/api/v1/orders': { GET: 'orders.read', POST: 'orders.write' },
+	'/api/v1/orders/[orderId=id]': { GET: 'orders.read' },
+	'/api/v1/orders/[orderId=id]/send': { POST: 'orders.write' },
+	'/api/v1/orders/[orderId=id]/receipts': { POST: 'orders.receive' },
+
 	// home
 	'/(app)/home': { GET: 'signed in' }
 };

@@ -11,7 +11,8 @@ import {
 	type NewOrderLine,
 	type OrderLine
 } from '../../queries/orders';
-import { done, missing, refused, type Outcome } from './outcome';
+import { done, missing, type Outcome } from '../outcome';
+import { conflict, refusedAt } from './refusals';
 
 type Edited = EditOrder['lines'][number];
 
@@ -51,16 +52,16 @@ function editedLines(lines: readonly OrderLine[], input: EditOrder, orderId: str
 export function editOrder(ctx: Context, id: string, input: EditOrder): Outcome<void> {
 	return write(ctx.db, (tx) => {
 		const before = findOrder(tx, ctx.shopId, id);
-		if (!before) return missing;
-		if (before.version !== input.version) return { kind: 'conflict', version: before.version };
+		if (!before) return missing('order');
+		if (before.version !== input.version) return conflict(ctx, id, input);
 		if (before.state !== 'draft')
-			return refused(
+			return refusedAt(
 				'state',
 				`Order ${before.number} is ${before.state}; only a draft is changed.`
 			);
 		const lines = listOrderLines(tx, ctx.shopId, id);
 		const unknown = input.lines.find((one) => !lines.some((line) => line.id === one.id));
-		if (unknown) return refused('lines', 'A line named here is not on this order.');
+		if (unknown) return refusedAt('lines', 'A line named here is not on this order.');
 		const after = editedLines(lines, input, id);
 		const { needBy, deliverTo, note, freightCents } = input;
 		const head = { needBy, deliverTo, note, freightCents };
@@ -71,7 +72,15 @@ export function editOrder(ctx: Context, id: string, input: EditOrder): Outcome<v
 			entity: 'order',
 			entityId: id,
 			summary: `Order ${before.number} was changed; it has ${after.length} lines.`,
-			before: { ...before, lines: lines.map(({ shape: _shape, ...line }) => line) },
+			before: {
+				...before,
+				lines: lines.map(({ id, quantity, unitPriceCents, purpose }) => ({
+					id,
+					quantity,
+					unitPriceCents,
+					purpose
+				}))
+			},
 			after: { ...head, lines: after }
 		});
 		return done(undefined);

@@ -3,7 +3,8 @@ import { write, type Queryable } from '../../db/client';
 import { enqueue, isPlainAddress } from '../../mail/outbox';
 import { appendHistory } from '../../queries/history';
 import { findOrder, updateOrder, type OrderHead, type OrderState } from '../../queries/orders';
-import { done, missing, refused, type Outcome } from './outcome';
+import { done, missing, type Outcome } from '../outcome';
+import { conflict, refusedAt } from './refusals';
 
 interface Ending {
 	readonly from: readonly OrderState[];
@@ -17,10 +18,10 @@ interface Ending {
 function endOrder(ctx: Context, id: string, version: number, ending: Ending): Outcome<void> {
 	return write(ctx.db, (tx) => {
 		const head = findOrder(tx, ctx.shopId, id);
-		if (!head) return missing;
-		if (head.version !== version) return { kind: 'conflict', version: head.version };
+		if (!head) return missing('order');
+		if (head.version !== version) return conflict(ctx, id, { version });
 		if (!ending.from.includes(head.state))
-			return refused('state', `Order ${head.number} is ${head.state}; ${ending.only}.`);
+			return refusedAt('state', `Order ${head.number} is ${head.state}; ${ending.only}.`);
 		updateOrder(tx, ctx.shopId, { id, version, states: ending.from }, { state: ending.to });
 		ending.also?.(tx, head);
 		appendHistory(tx, ctx, {

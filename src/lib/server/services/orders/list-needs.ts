@@ -1,5 +1,5 @@
 import { invariant } from '../../../domain/invariant';
-import { lineByLine, type BuyingChoice, type BuyingNeed } from '../../../domain/trade/buying';
+import type { BuyingChoice, BuyingNeed } from '../../../domain/trade/buying';
 import type { Context } from '../../context';
 import {
 	listBuyable,
@@ -12,6 +12,7 @@ import {
 } from '../../queries/needs';
 import { findShopHead } from '../../queries/orders';
 import { listSuppliers, type Supplier } from '../../queries/suppliers';
+import { choosePurchase } from './choose';
 import { addDays, isoDay } from './goods';
 import { earliest, needRow, type Known, type NeedRow } from './need-rows';
 
@@ -71,7 +72,11 @@ function choose(
 	const needs = stock
 		.filter((one) => (rows.get(one.id) ?? 0) > 0)
 		.map((one) => buyingNeed(one, rows.get(one.id)!));
-	return lineByLine(needs, needs.length > 0 ? (supplier?.minimumOrderCents ?? 0) : 0);
+	return choosePurchase(needs, {
+		id: supplier?.id ?? 'none',
+		minimumCents: supplier?.minimumOrderCents ?? 0,
+		freightCents: supplier?.freightCents ?? 0
+	});
 }
 
 function supplierNeeds(

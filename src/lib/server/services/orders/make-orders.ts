@@ -20,7 +20,7 @@ import { listSuppliers, type Supplier } from '../../queries/suppliers';
 import { goodsName } from './goods';
 import { listNeeds, type NeedRow } from './list-needs';
 import { earliest } from './need-rows';
-import { done, type Outcome } from './outcome';
+import { done, type Outcome } from '../outcome';
 
 type Wanted = NewOrders['lines'][number];
 

@@ -83,11 +83,12 @@ function jobNeed(jobId: string, stockLengthId: string, known: Known): JobNeed<Co
 	const claims = known.claimed.filter(
 		(one) => one.jobId === jobId && one.stockLengthId === stockLengthId
 	);
+	// Sticks begun under an earlier revision stay claimed by it, and are carried on in the newest one.
+	const claimed = sumOf(claims.map((one) => one.count));
 	const asked = (kind: 'buy' | 'cut'): Counted | null => {
 		const release = ours.find((one) => one.kind === kind);
 		if (!release) return null;
-		const taken = claims.filter((one) => kind === 'buy' || one.releaseId === release.releaseId);
-		return { ...release, claimed: sumOf(taken.map((one) => one.count)) };
+		return { ...release, claimed };
 	};
 	const cut = known.released.find((one) => one.jobId === jobId && one.kind === 'cut');
 	return supersede({ buy: asked('buy'), cut: asked('cut'), leftOut: (cut?.leftOut ?? 0) > 0 }, cut);

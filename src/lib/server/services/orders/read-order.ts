@@ -73,6 +73,12 @@ function moneyOf(head: OrderHead, lines: readonly OrderLine[]): NonNullable<Orde
 	};
 }
 
+function withoutCents(head: OrderHead): OrderView['order'] {
+	const { freightCents, minimumOrderCents, ...order } = head;
+	void [freightCents, minimumOrderCents];
+	return order;
+}
+
 /** One order as its page, its print and the API show it; undefined when the shop has none such. */
 export function readOrder(ctx: Context, id: string): OrderView | undefined {
 	const head = findOrder(ctx.db, ctx.shopId, id);
@@ -82,9 +88,8 @@ export function readOrder(ctx: Context, id: string): OrderView | undefined {
 	invariant(shop, 'the session names a shop that is gone');
 	const today = isoDay(ctx.now, shop.timeZone);
 	const lines = listOrderLines(ctx.db, ctx.shopId, id);
-	const { freightCents: _freight, minimumOrderCents: _minimum, ...order } = head;
 	return {
-		order,
+		order: withoutCents(head),
 		lines: lines.map((line) => lineView(line, today, withPrices)),
 		money: withPrices ? moneyOf(head, lines) : null,
 		message: head.outboxId ? (findMessageState(ctx.db, ctx.shopId, head.outboxId) ?? null) : null,

@@ -6,7 +6,9 @@ import type { Context } from '../../context';
 import { write, type Queryable } from '../../db/client';
 import { newId } from '../../ids';
 import { appendHistory } from '../../queries/history';
+import { appendLedger } from '../../queries/ledger';
 import { insertMetal, nextMetalLabel } from '../../queries/metal';
+import { listStockLengths } from '../../queries/stock-lengths';
 import {
 	findOrder,
 	listOrderLines,
@@ -17,7 +19,8 @@ import {
 } from '../../queries/orders';
 import { findReceiptByOp, insertReceipt } from '../../queries/receipts';
 import { findShop, type Shop } from '../../queries/shops';
-import { done, missing, refused, type Outcome } from './outcome';
+import { done, missing, type Outcome } from '../outcome';
+import { refusedAt } from './refusals';
 
 export interface Received {
 	readonly receiptId: string;
@@ -49,6 +52,43 @@ export const usableOf = (
 export const sameStick = (line: Pick<OrderLine, 'nominalNm'>, actual: Length): boolean =>
 	Math.abs(actual - line.nominalNm) < 304_800_000;
 
+/** What it is kept as: the stock length ordered, another one of the pair that it measures like, or none. */
+function stockLengthOf(
+	tx: Queryable,
+	ctx: Context,
+	line: OrderLine,
+	actual: Length
+): string | null {
+	if (sameStick(line, actual)) return line.stockLengthId;
+	const { profileId, materialId } = line;
+	const others = listStockLengths(tx, ctx.shopId, { profileId, materialId });
+	return others.find((other) => sameStick(other, actual))?.id ?? null;
+}
+
+/**
+ * New metal comes in; what is whole lies unused until a release cuts it, what is damaged goes back. Both
+ * sides are booked, so that the ledger balances at once.
+ */
+function book(
+	tx: Queryable,
+	ctx: Context,
+	line: OrderLine,
+	of: { actualNm: Length; metalId: string | null; reason: string }
+): void {
+	const entry = {
+		profileId: line.profileId,
+		materialId: line.materialId,
+		metalId: of.metalId,
+		basis: 'actual' as const,
+		lengthNm: of.actualNm,
+		reason: of.reason
+	};
+	appendLedger(tx, ctx, [
+		{ ...entry, account: 'new metal' },
+		{ ...entry, account: of.metalId ? 'spare and unused lengths' : 'returned to supplier' }
+	]);
+}
+
 /** Puts each length that arrived in good order on hand, under a label of its own. */
 function putOnHand(
 	tx: Queryable,
@@ -56,18 +96,22 @@ function putOnHand(
 	shop: Shop,
 	line: OrderLine,
 	arrived: Arrived,
-	receiptLineId: string
+	{ receiptLineId, reason }: { receiptLineId: string; reason: string }
 ): string[] {
 	const actualNm = length(arrived.actualNm);
+	const stockLengthId = stockLengthOf(tx, ctx, line, actualNm);
+	for (let n = 0; n < arrived.damaged; n++)
+		book(tx, ctx, line, { actualNm, metalId: null, reason: `${reason}, damaged` });
 	return Array.from({ length: arrived.received - arrived.damaged }, () => {
 		const label = nextMetalLabel(tx, ctx.shopId, 'S');
+		const id = newId();
 		insertMetal(tx, ctx.shopId, {
-			id: newId(),
+			id,
 			kind: 'stick',
 			label,
 			profileId: line.profileId,
 			materialId: line.materialId,
-			stockLengthId: sameStick(line, actualNm) ? line.stockLengthId : null,
+			stockLengthId,
 			batch: arrived.batch,
 			actualNm,
 			usableNm: usableOf(line, actualNm),
@@ -78,6 +122,7 @@ function putOnHand(
 			receiptLineId,
 			createdAt: ctx.now
 		});
+		book(tx, ctx, line, { actualNm, metalId: id, reason });
 		return label;
 	});
 }
@@ -139,7 +184,8 @@ function record(
 	const labels = rows.flatMap((row) => {
 		const line = lines.find((one) => one.id === row.orderLineId);
 		invariant(line, 'lines were checked before');
-		return putOnHand(tx, ctx, shop, line, row, row.id);
+		const origin = { receiptLineId: row.id, reason: `order ${head.number} received` };
+		return putOnHand(tx, ctx, shop, line, row, origin);
 	});
 	const received = { receiptId, labels, ...balance(lines, arrived) };
 	const at = { id: head.id, version: head.version, states: [head.state] };
@@ -161,16 +207,16 @@ function obstacle(
 	input: Receipt
 ): Outcome<never> | null {
 	if (head.state === 'draft' || head.state === 'cancelled')
-		return refused(
+		return refusedAt(
 			'state',
 			`Order ${head.number} is ${head.state}; only one that was sent is received.`
 		);
 	if (input.lines.some((one) => !lines.some((line) => line.id === one.orderLineId)))
-		return refused('lines', 'A line named here is not on this order.');
+		return refusedAt('lines', 'A line named here is not on this order.');
 	if (new Set(input.lines.map((one) => one.orderLineId)).size !== input.lines.length)
-		return refused('lines', 'A line is named twice; accepted is each line once per delivery.');
+		return refusedAt('lines', 'A line is named twice; accepted is each line once per delivery.');
 	if (input.lines.every((line) => line.received === 0))
-		return refused('lines', 'Nothing arrived on any line; accepted is at least one length.');
+		return refusedAt('lines', 'Nothing arrived on any line; accepted is at least one length.');
 	return tooShort(lines, input);
 }
 
@@ -179,7 +225,7 @@ function tooShort(lines: readonly OrderLine[], input: Receipt): Outcome<never> |
 		const line = lines.find((one) => one.id === arrived.orderLineId)!;
 		if (arrived.received === 0 || usableOf(line, length(arrived.actualNm)) > 0) continue;
 		const read = formatLength(length(arrived.actualNm), { units: 'imperial' });
-		return refused(
+		return refusedAt(
 			`lines.${index}.actualNm`,
 			`Actual length of ${line.profileCode}: read "${read}"; nothing of it could be used.`
 		);
@@ -195,7 +241,7 @@ function tooShort(lines: readonly OrderLine[], input: Receipt): Outcome<never> |
 export function receiveOrder(ctx: Context, id: string, input: Receipt): Outcome<Received> {
 	return write(ctx.db, (tx) => {
 		const head = findOrder(tx, ctx.shopId, id);
-		if (!head) return missing;
+		if (!head) return missing('order');
 		const lines = listOrderLines(tx, ctx.shopId, id);
 		const earlier = findReceiptByOp(tx, ctx.shopId, input.opId);
 		if (earlier)

@@ -5,7 +5,8 @@ import { enqueue, isPlainAddress } from '../../mail/outbox';
 import { appendHistory } from '../../queries/history';
 import { findOrder, listOrderLines, updateOrder, type OrderState } from '../../queries/orders';
 import { orderPaper, type OrderPaper } from './order-paper';
-import { done, missing, refused, type Outcome } from './outcome';
+import { done, missing, type Outcome } from '../outcome';
+import { conflict, refusedAt } from './refusals';
 
 export interface Sent {
 	readonly outboxId: string;
@@ -17,12 +18,12 @@ export interface Sent {
 function obstacle(ctx: Context, paper: OrderPaper): Outcome<never> | null {
 	const { head } = paper;
 	if (!isPlainAddress(head.supplierEmail))
-		return refused(
+		return refusedAt(
 			'supplier',
 			`E-mail of ${head.supplierName}: read "${head.supplierEmail}"; accepted is one address such as orders@supplier.example.`
 		);
 	if (listOrderLines(ctx.db, ctx.shopId, head.id).length === 0)
-		return refused('lines', `Order ${head.number} has no lines; accepted is at least one.`);
+		return refusedAt('lines', `Order ${head.number} has no lines; accepted is at least one.`);
 	return null;
 }
 
@@ -91,10 +92,10 @@ function dispatchOnce(
 /** A double click finds the order sent by its first half; anything else is somebody else's change. */
 function afterRace(ctx: Context, id: string, version: number): Outcome<Sent> {
 	const now = findOrder(ctx.db, ctx.shopId, id);
-	if (!now) return missing;
+	if (!now) return missing('order');
 	if (now.state === 'sent' && now.version === version + 1 && now.outboxId)
 		return done({ outboxId: now.outboxId, before: true });
-	return { kind: 'conflict', version: now.version };
+	return conflict(ctx, id, { version });
 }
 
 /**
@@ -103,7 +104,7 @@ function afterRace(ctx: Context, id: string, version: number): Outcome<Sent> {
  */
 export async function sendOrder(ctx: Context, id: string, version: number): Promise<Outcome<Sent>> {
 	const paper = orderPaper(ctx, id);
-	if (!paper) return missing;
+	if (!paper) return missing('order');
 	if (paper.head.version !== version || paper.head.state !== 'draft')
 		return afterRace(ctx, id, version);
 	const problem = obstacle(ctx, paper);
@@ -124,11 +125,11 @@ export async function resendOrder(
 	version: number
 ): Promise<Outcome<Sent>> {
 	const paper = orderPaper(ctx, id);
-	if (!paper) return missing;
+	if (!paper) return missing('order');
 	const { head } = paper;
-	if (head.version !== version) return { kind: 'conflict', version: head.version };
+	if (head.version !== version) return conflict(ctx, id, { version });
 	if (head.state !== 'sent' && head.state !== 'part received')
-		return refused(
+		return refusedAt(
 			'state',
 			`Order ${head.number} is ${head.state}; only one that was sent goes again.`
 		);
