@@ -198,13 +198,27 @@ function insertAfter(rows: Rows, id: string | undefined, added: Rows): Rows {
 export const addRow = (grid: Grid, row: Row, afterId?: string): Grid =>
 	step(grid, insertAfter(grid.rows, afterId, [row]));
 
-export const removeRows = (grid: Grid, ids: ReadonlySet<string>): Grid =>
-	ids.size === 0
+export const removeRows = (grid: Grid, ids: readonly string[]): Grid => {
+	const gone = new Set(ids);
+	return gone.size === 0
 		? grid
 		: step(
 				grid,
-				grid.rows.filter((row) => !ids.has(row.id))
+				grid.rows.filter((row) => !gone.has(row.id))
 			);
+};
+
+/** Marks that stand on more than one row, in lower case. */
+export function doubledMarks(rows: Rows): ReadonlySet<string> {
+	const seen = new Set<string>();
+	const doubled = new Set<string>();
+	for (const row of rows) {
+		const mark = row.cells.mark.trim().toLowerCase();
+		if (mark !== '' && seen.has(mark)) doubled.add(mark);
+		seen.add(mark);
+	}
+	return doubled;
+}
 
 /** Swaps a row with its neighbour in view; at the edge nothing happens. */
 export function moveRow(grid: Grid, view: Rows, index: number, by: -1 | 1): Grid {

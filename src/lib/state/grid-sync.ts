@@ -47,12 +47,18 @@ export const orderOf = (rows: Rows): Map<string, string[]> => {
 };
 
 /** The state just after loading: everything is as the server holds it. */
-export const startSync = (rows: Rows, versions: ReadonlyMap<string, number>): Sync => ({
-	base: new Map(rows.map((row) => [row.id, { row, version: versions.get(row.id) ?? 0 }])),
-	order: orderOf(rows),
-	conflicts: new Map(),
-	refused: new Map()
-});
+export function startSync(
+	rows: Rows,
+	stored: readonly { readonly id: string; readonly version: number }[]
+): Sync {
+	const versions = new Map(stored.map(({ id, version }) => [id, version]));
+	return {
+		base: new Map(rows.map((row) => [row.id, { row, version: versions.get(row.id) ?? 0 }])),
+		order: orderOf(rows),
+		conflicts: new Map(),
+		refused: new Map()
+	};
+}
 
 const same = (a: Row | null | undefined, b: Row): boolean =>
 	a === b ||

@@ -133,3 +133,6 @@ function keptParts(
 		rightEnd: hidden.rightKind === record.rightKind ? hidden.rightEnd : null
 	};
 }
+
+export const byId = <T extends { readonly id: string }>(of: readonly T[]): ReadonlyMap<string, T> =>
+	new Map(of.map((one) => [one.id, one]));

@@ -10,7 +10,7 @@ import {
 	type Lookups,
 	type StoredRun
 } from './run-cells';
-import { TakeoffFigures, type FigureInput, type HiddenParts } from './takeoff-figures';
+import { byId, TakeoffFigures, type FigureInput, type HiddenParts } from './takeoff-figures';
 import { parseTsv, formatTsv } from './tsv';
 import { isHeaderRow, recogniseHeaders } from '../words/takeoff-headers';
 
@@ -58,7 +58,7 @@ const toRow = (run: LoadedRun, lookups: Lookups): Row => ({
 /** The state of the takeoff page: a thin façade over grid-core, grid-sync and the figures. */
 export class TakeoffState {
 	grid = $state.raw<Grid>(core.createGrid([]));
-	sync = $state.raw<Sync>(syncing.startSync([], new Map()));
+	sync = $state.raw<Sync>(syncing.startSync([], []));
 	elevationId = $state('');
 	anchor = $state.raw<At>({ row: 0, column: 0 });
 	focus = $state.raw<At>({ row: 0, column: 0 });
@@ -77,7 +77,7 @@ export class TakeoffState {
 	readonly current = $derived<Row | undefined>(this.view[this.focus.row]);
 	readonly groups = $derived.by(() => this.figures.groups(this.grid.rows));
 	/** Marks that stand on more than one row. */
-	readonly doubled = $derived(doubledMarks(this.grid.rows));
+	readonly doubled = $derived(core.doubledMarks(this.grid.rows));
 	readonly unsaved = $derived(
 		syncing.changedRows(this.grid.rows, this.sync).length +
 			syncing.removedIds(this.grid.rows, this.sync).length
@@ -91,12 +91,11 @@ export class TakeoffState {
 		this.#options = options;
 		const { lookups } = options.figures;
 		const rows = options.runs.map((run) => toRow(run, lookups));
-		const versions = new Map(options.runs.map((run) => [run.id, run.version]));
 		this.figures = new TakeoffFigures({
 			...options.figures,
-			hidden: new Map(options.runs.map((run) => [run.id, run]))
+			hidden: byId(options.runs)
 		});
-		this.sync = syncing.startSync(rows, versions);
+		this.sync = syncing.startSync(rows, options.runs);
 		this.grid = core.createGrid(rows);
 		this.elevationId = options.elevations[0]?.id ?? '';
 	}
@@ -230,7 +229,7 @@ export class TakeoffState {
 	}
 
 	removeRows(ids: readonly string[]): void {
-		this.#set(core.removeRows(this.grid, new Set(ids)));
+		this.#set(core.removeRows(this.grid, ids));
 		this.select({
 			row: Math.min(this.area.from.row, this.view.length - 1),
 			column: this.focus.column
@@ -379,17 +378,6 @@ const columnOf = (name: string | undefined): Column | null =>
 	(COLUMNS as readonly string[]).includes(name ?? '')
 		? (name as Column)
 		: (FIELD_COLUMNS[name ?? ''] ?? null);
-
-function doubledMarks(rows: core.Rows): ReadonlySet<string> {
-	const seen = new Set<string>();
-	const doubled = new Set<string>();
-	for (const row of rows) {
-		const mark = row.cells.mark.trim().toLowerCase();
-		if (mark !== '' && seen.has(mark)) doubled.add(mark);
-		seen.add(mark);
-	}
-	return doubled;
-}
 
 /** The next mark that neither a row nor one of the rows being made has. */
 function nextFree(

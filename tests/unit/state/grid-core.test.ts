@@ -189,7 +189,7 @@ describe('the grid', () => {
 		const moved = moveRow(createGrid(rows), rows, 2, -1);
 		expect(moved.rows.map((r) => r.id)).toEqual(['N01', 'N03', 'N02']);
 		expect(moveRow(moved, moved.rows, 0, -1)).toBe(moved);
-		expect(removeRows(moved, new Set(['N03'])).rows.map((r) => r.id)).toEqual(['N01', 'N02']);
+		expect(removeRows(moved, ['N03']).rows.map((r) => r.id)).toEqual(['N01', 'N02']);
 	});
 
 	it('suggests the next mark of the series', () => {
@@ -209,7 +209,7 @@ describe('words in cells', () => {
 	});
 });
 
-const versions = new Map(rows.map((r) => [r.id, 1]));
+const versions = rows.map((r) => ({ id: r.id, version: 1 }));
 const read = (r: Row) => {
 	const { body, problems } = readCells(r.cells, lookups);
 	return { body: { ...body, elevationId: r.elevationId, level: r.level }, problems };
@@ -243,7 +243,7 @@ describe('what is not saved', () => {
 	});
 
 	it('is removed, and after undo put again with the version of the removal', () => {
-		const grid = removeRows(createGrid(rows), new Set(['N03']));
+		const grid = removeRows(createGrid(rows), ['N03']);
 		const batch = nextBatch(grid.rows, sync, read);
 		expect(batch.remove).toEqual([{ id: 'N03', version: 1 }]);
 		const after = afterSaved(sync, batch, grid.rows, {
@@ -287,11 +287,7 @@ describe('what is not saved', () => {
 		const kept = JSON.parse(JSON.stringify(toKept(added.rows, sync)));
 		const newer = startSync(
 			rows,
-			new Map([
-				['N01', 7],
-				['N02', 1],
-				['N03', 1]
-			])
+			rows.map((r) => ({ id: r.id, version: r.id === 'N01' ? 7 : 1 }))
 		);
 		const back = restoreKept(rows, newer, kept);
 		expect(back.rows.map((r) => [r.id, r.cells.face])).toEqual([
