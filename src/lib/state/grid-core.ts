@@ -5,7 +5,7 @@
  * INVARIANT: a row object is never changed, so two lists share the rows that did not change, and a row is
  * unsaved exactly when it is not the object that was saved (grid-core.test.ts).
  */
-import { COLUMNS, type Cells, type Column } from './run-cells';
+import { COLUMNS, type Cells, type Column } from '../forms/run-cells';
 
 export interface Row {
 	readonly id: string;

@@ -3,7 +3,7 @@
  * the server holds as far as this page knows, and the difference to the rows is what has to be sent.
  */
 import type { Row, Rows } from './grid-core';
-import type { CellProblems, Column, RunBody } from './run-cells';
+import type { CellProblems, Column, RunBody } from '../forms/run-cells';
 
 /** A row as the server holds it; `row` is null once it was deleted there. */
 export interface BaseRow {

@@ -11,7 +11,7 @@ import {
 import { describeProblem, type Result } from '../domain/result';
 import type { ProfileRules, RunRecord } from '../domain/takeoff/resolve-run';
 import type { Row, Rows } from './grid-core';
-import { readCells, type Lookups, type ReadCells } from './run-cells';
+import { readCells, type Lookups, type ReadCells } from '../forms/run-cells';
 
 /** What a stored run holds that the grid does not show; it goes on counting. */
 export type HiddenParts = Pick<

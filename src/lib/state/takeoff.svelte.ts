@@ -9,7 +9,7 @@ import {
 	type Column,
 	type Lookups,
 	type StoredRun
-} from './run-cells';
+} from '../forms/run-cells';
 import { byId, TakeoffFigures, type FigureInput, type HiddenParts } from './takeoff-figures';
 import { parseTsv, formatTsv } from './tsv';
 import { isHeaderRow, recogniseHeaders } from '../words/takeoff-headers';

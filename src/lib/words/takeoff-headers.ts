@@ -1,4 +1,4 @@
-import type { Column } from '../state/run-cells';
+import type { Column } from '../forms/run-cells';
 
 /** A column of a takeoff sheet: a column of the grid, or the elevation that the grid shows as tabs. */
 export type Header = Column | 'elevation';

@@ -31,7 +31,7 @@ import {
 	readCells,
 	readWord,
 	END_WORDS
-} from '../../../src/lib/state/run-cells';
+} from '../../../src/lib/forms/run-cells';
 import { formatHtmlTable, formatTsv, parseTsv } from '../../../src/lib/state/tsv';
 
 const lookups = {

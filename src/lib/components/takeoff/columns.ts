@@ -1,5 +1,5 @@
 import { m } from '$lib/paraglide/messages';
-import { CHOICE_WORDS, END_WORDS, type Column, type Lookups } from '$lib/state/run-cells';
+import { CHOICE_WORDS, END_WORDS, type Column, type Lookups } from '$lib/forms/run-cells';
 
 /** Heading of each column. */
 export const headingOf = (column: Column): string =>
@@ -50,3 +50,7 @@ export const FIGURES: ReadonlySet<Column> = new Set([
 	'lap',
 	'keepOut'
 ]);
+
+/** Heading of a column of a takeoff file. */
+export const headerWord = (header: string): string =>
+	header === 'elevation' ? m.takeoff_elevation() : headingOf(header as Column);

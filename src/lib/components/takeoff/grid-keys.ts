@@ -1,4 +1,4 @@
-import { COLUMNS } from '$lib/state/run-cells';
+import { COLUMNS } from '$lib/forms/run-cells';
 import type { TakeoffState } from '$lib/state/takeoff.svelte';
 
 /** What a key does while moving about in the grid. */

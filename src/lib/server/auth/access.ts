@@ -63,6 +63,8 @@ export const ACCESS: Readonly<Record<string, Readonly<Record<string, Rule>>>> = 
 	'/(app)/jobs/[jobId=id]/import': {
 		GET: 'jobs.write',
 		'POST ?/upload': 'jobs.write',
+		'POST ?/map': 'jobs.write',
+		'POST ?/setAside': 'jobs.write',
 		'POST ?/take': 'jobs.write',
 		'POST ?/correct': 'jobs.write',
 		'POST ?/undo': 'jobs.write'

@@ -76,6 +76,10 @@ export function saveRuns(ctx: Context, jobId: string, batch: RunBatch): Outcome<
 	}
 }
 
+/** The same inside a transaction that does more, e.g. an import. @throws Refusal when a row is not taken. */
+export const saveRunsWithin = (tx: Queryable, ctx: Context, job: Job, batch: RunBatch): SavedRuns =>
+	saveAll(startWork(tx, ctx, job), batch);
+
 function startWork(tx: Queryable, ctx: Context, job: Job): Work {
 	return {
 		tx,
