@@ -9,6 +9,7 @@ export interface TapeSpace {
 	readonly units: UnitSystem;
 	/** Length that fills the width, so that all tapes of a group share one scale. */
 	readonly longestNm: number;
+	readonly rows: boolean;
 }
 
 export const GUTTER = 64;
@@ -53,6 +54,8 @@ export interface Tape {
 }
 
 const textWidth = (text: string): number => text.length * GLYPH;
+/** A kerf is drawn as a gap that can be seen, whatever the scale. */
+const LEAST_GAP = 3;
 const round = (value: number): number => Math.round(value * 10) / 10;
 
 /** Tick ranks from strong to fine, in nanometres; finer than `least` units apart are left out. */
@@ -90,7 +93,8 @@ export function layoutTape(sticks: readonly StickView[], space: TapeSpace): Tape
 	const top = 2 + lift * CALLOUT_H + TICKS_H;
 	const pieces = stick!.cuts.map((cut, i): PieceBox => {
 		const at = x(hook + cut.atNm);
-		const width = round(cut.lengthNm * perUnit);
+		const gap = Math.max(0, LEAST_GAP - stick!.kerfNm * perUnit);
+		const width = round(Math.max(2, cut.lengthNm * perUnit - gap));
 		const name = names[i];
 		const middle = round(at + width / 2);
 		if (name) {
@@ -114,7 +118,7 @@ export function layoutTape(sticks: readonly StickView[], space: TapeSpace): Tape
 	});
 	const marks = runningMarks(stick!, space.units, x, hook, top + BAR_H);
 	const under = top + BAR_H + (marks.some((mark) => mark.level === 1) ? 2 : 1) * MARK_H + 4;
-	const rows = sticks.length === 1 ? [] : rowsOf(sticks, pieces, under);
+	const rows = sticks.length === 1 || !space.rows ? [] : rowsOf(sticks, pieces, under);
 	return {
 		height: round(under + rows.length * MARK_H + 2),
 		top,

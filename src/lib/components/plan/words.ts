@@ -95,3 +95,28 @@ export const stageWord = (stage: string): string =>
 		diving: m.plan_stage_diving(),
 		search: m.plan_stage_search()
 	})[stage] ?? stage;
+
+/** `Rev A`, or `To buy` with its margin. */
+export const releaseName = (of: {
+	kind: string;
+	revision: string;
+	marginPercent: number;
+}): string =>
+	of.kind === 'cut'
+		? m.plan_kind_cut({ revision: of.revision })
+		: `${m.plan_kind_buy()} +${of.marginPercent} %`;
+
+export const changeWord = (change: string): string =>
+	({
+		new: m.plan_change_new(),
+		changed: m.plan_change_changed(),
+		removed: m.plan_change_removed(),
+		unchanged: m.plan_change_unchanged()
+	})[change] ?? change;
+
+export const adviceWord = (advice: string): string =>
+	({
+		keep: m.plan_advice_keep(),
+		rework: m.plan_advice_rework(),
+		scrap: m.plan_advice_scrap()
+	})[advice] ?? '';

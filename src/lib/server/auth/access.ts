@@ -96,7 +96,7 @@ export const ACCESS: Readonly<Record<string, Readonly<Record<string, Rule>>>> = 
 	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]/cut-sheet': { GET: 'sheets.read' },
 	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]/changes': { GET: 'sheets.read' },
 	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]/cut-sheet.xlsx': { GET: 'sheets.read' },
-	'/(app)/jobs/[jobId=id]/releases/[releaseId=id]/waste.xlsx': { GET: 'plans.read' },
+	'/(app)/jobs/[jobId=id]/waste.xlsx': { GET: 'plans.read' },
 	'/(app)/jobs/[jobId=id]/waste': { GET: 'plans.read' },
 	'/api/v1/solves': { POST: 'plans.make' },
 	'/api/v1/solves/[solveId=id]': { GET: 'plans.read' },
