@@ -30,6 +30,7 @@ test.describe('profiles', () => {
 
 	test('a bad leg is named at once, and what was typed stays', async ({ page }) => {
 		await page.goto('/profiles/new?kind=fascia');
+		await page.getByLabel('Code', { exact: true }).fill(code());
 		const leg = page.getByLabel('Length of leg 2');
 		await leg.fill('6 3/7');
 		await expect(page.getByRole('alert').first()).toContainText('Length of leg 2: read "6 3/7"');

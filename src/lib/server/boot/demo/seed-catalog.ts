@@ -119,17 +119,20 @@ function seedRack(tx: Queryable, staff: DemoStaff, catalog: DemoCatalog, now: nu
 				createdAt: now - 30 * DAY
 			}
 		]);
+		const entry = {
+			...pair,
+			metalId: id,
+			at: now - 30 * DAY,
+			basis: 'actual' as const,
+			lengthNm: actual,
+			by: staff.byRole['shop lead'].id,
+			reason: 'counted when the rack was first entered'
+		};
+		// Both sides, so that the identity of the waste report holds from the first day.
+		const kept = item.kind === 'offcut' ? 'offcuts kept' : 'spare and unused lengths';
 		insertRows(tx, 'ledger', [
-			{
-				...pair,
-				metalId: id,
-				at: now - 30 * DAY,
-				account: 'rack metal',
-				basis: 'actual',
-				lengthNm: actual,
-				by: staff.byRole['shop lead'].id,
-				reason: 'counted when the rack was first entered'
-			}
+			{ ...entry, account: 'rack metal' },
+			{ ...entry, account: kept }
 		]);
 	}
 }

@@ -147,7 +147,8 @@ export const correctMetal = (ctx: Context, at: At, input: MetalInput): Saved<Lis
 			if (difference === 0) return;
 			const { profileId, materialId } = before;
 			const of = { id: at.id, profileId, materialId, lengthNm: difference, reason: input.reason };
-			book(tx, ctx, { ...of, to: 'offcuts kept' });
+			const to = before.kind === 'offcut' ? 'offcuts kept' : 'spare and unused lengths';
+			book(tx, ctx, { ...of, to });
 		}
 	});
 
