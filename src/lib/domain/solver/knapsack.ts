@@ -57,15 +57,23 @@ export class Knapsack {
 		this.#rows.forEach((row, r) => this.#addRow(r, row.size, row.copies * values[row.item]!));
 	}
 
-	/** Counts by item of a best pattern of bin `bin` in the filled table. */
-	best(bin: number): Int32Array {
+	/** Best value of pieces alone at every capacity up to `most`, from the filled table. */
+	bestByCapacity(most: number): Float64Array {
+		return Float64Array.from({ length: most + 1 }, (_, c) => this.#bestFor(c).value);
+	}
+
+	/** Counts by item of a best pattern within a capacity of the filled table. */
+	bestAt(capacity: number): Int32Array {
 		const counts = new Int32Array(this.#model.items.length);
-		const capacity = this.#model.bins[bin]!.coarse;
 		const { large } = this.#bestFor(capacity);
 		if (large >= 0) counts[large] = 1;
-		const used = large >= 0 ? this.#model.items[large]!.coarse : 0;
-		this.#backtrack(capacity - used, counts);
+		this.#backtrack(capacity - (large >= 0 ? this.#model.items[large]!.coarse : 0), counts);
 		return counts;
+	}
+
+	/** Counts by item of a best pattern of bin `bin` in the filled table. */
+	best(bin: number): Int32Array {
+		return this.bestAt(this.#model.bins[bin]!.coarse);
 	}
 
 	/** A best pattern of bin `bin` with at least one `item`, or null when the table's has it already spent. */

@@ -62,16 +62,21 @@ export const gcd = (a: number, b: number): number => {
 	return a;
 };
 
-/** The problem reduced to whole grid units: equal lengths merged, kerf folded in, divided by the gcd. */
-export function reduce(problem: PackingProblem): Model {
+/**
+ * The problem reduced to whole grid units: equal lengths merged, kerf folded in, divided by the gcd.
+ * `beside`: other lengths that must lie on the grid; then every bin is kept, whatever the pieces.
+ */
+export function reduce(problem: PackingProblem, beside: readonly number[] = []): Model {
 	const lengths = mergePieces(problem);
 	const sizes = lengths.map((item) => item.length + problem.kerf);
-	const unit = sizes.reduce(gcd, 0) || 1;
+	const unit = [...sizes, ...beside].reduce(gcd, 0) || 1;
 	const bins = mergeBins(problem).map((bin) => ({
 		...bin,
 		capacity: Math.floor((bin.sources[0]!.room + problem.kerf) / unit)
 	}));
-	const usable = dropUseless(bins, Math.min(...sizes.map((size) => size / unit)));
+	const smallest = Math.min(...sizes.map((size) => size / unit));
+	const usable =
+		beside.length > 0 ? bins.filter((bin) => bin.limit > 0) : dropUseless(bins, smallest);
 	const capacity = Math.max(1, ...usable.map((bin) => bin.capacity));
 	const halvings = coarseness(capacity, lengths.length);
 	const coarsen = (value: number) => Math.floor(value / 2 ** halvings);

@@ -108,8 +108,9 @@ describe('runs', () => {
 		...{ mark: 'N-2', length: "20'", joint: { kind: 'lap', overlap: 4 }, minPiece: 24 }
 	};
 
+	const stock = without('pieces');
+
 	it('divides evenly unless told otherwise, with positions from the left', async () => {
-		const { pieces: _, ...stock } = BASE;
 		expect(await answer({ ...stock, runs: [run] })).toMatchObject({
 			...{ status: 'proven', joints: 2, lengthsUsed: 3 },
 			runs: [
@@ -126,7 +127,6 @@ describe('runs', () => {
 	});
 
 	it('adds the price of each joint, and packs the plates of plate joints', async () => {
-		const { pieces: _, ...stock } = BASE;
 		const joint = { kind: 'plate', gap: '1/4', plate: '6' };
 		const answered = await answer({ ...stock, runs: [{ ...run, joint }], jointPrice: 3.25 });
 		expect(answered).toMatchObject({ status: 'proven', cost: 58.45, joints: 1 });
@@ -134,7 +134,6 @@ describe('runs', () => {
 	});
 
 	it('says why a run cannot be divided', async () => {
-		const { pieces: _, ...stock } = BASE;
 		const never = { ...run, keepOut: [["1'", "19'"]] };
 		expect(await answer({ ...stock, runs: [never] })).toMatchObject({
 			status: 'impossible',

@@ -1,9 +1,10 @@
-import { inches, length, minimum, type Length } from '../../lengths/length';
+import { add, inches, length, maximum, minimum, type Length } from '../../lengths/length';
 import { roundDownTo, roundUpTo } from '../../lengths/round';
 import { frameOf, leastPieces, overlapsOf } from '../../takeoff/division';
 import { placeJoints } from '../../takeoff/place-joints';
 import { canDivide, type Frame } from '../../takeoff/reach';
 import type { JointChoice, RunToDivide } from '../../takeoff/takeoff';
+import type { RunToPlace } from '../free-joints/plan-free-runs';
 import { printLength, refuse } from './reader';
 import type { FileProblem, FileRun } from './read-problem';
 
@@ -124,6 +125,21 @@ export function cutRun(plan: RunPlan, lengths: readonly Length[]): CutRun {
 			? overlaps.map((_, i) => ({ mark: `${mark}/plate ${i + 1}`, length: joint.plate }))
 			: [];
 	return { mark, pieces, plates, joints: overlaps.length };
+}
+
+/** A lapped run as the search for free joints needs it. */
+export function toPlace(plan: RunPlan): RunToPlace {
+	const { precision, joint } = plan.toDivide;
+	const lap = joint.kind === 'lap' ? joint.overlap : length(0);
+	return {
+		precision,
+		run: {
+			...{ mark: plan.run.mark, total: plan.run.length, overlap: lap, limit: plan.limit },
+			minPiece: roundUpTo(maximum(plan.minPiece, add(lap, precision)), precision)
+		},
+		sum: (n) => frameOf(plan.toDivide, n, plan.limit).sum * precision,
+		blocked: (n) => frameOf(plan.toDivide, n, plan.limit).blocked
+	};
 }
 
 /** What to say of a run that no number of pieces divides. */

@@ -4,13 +4,17 @@ import type { PackingPlan, PackingProblem } from '../../plan/plan';
 import { estimate } from '../estimate';
 import { gcd } from '../model';
 import type { SolveOptions } from '../options';
+import { planFreeRuns } from '../free-joints/plan-free-runs';
 import { solve } from '../solve';
+import { startWork, type Work } from '../work';
 import {
 	cannotDivide,
 	coversRun,
+	cutRun,
 	divideBy,
 	planRun,
 	possibleNumbers,
+	toPlace,
 	type CannotDivide,
 	type CutRun,
 	type RunPlan
@@ -45,9 +49,11 @@ export interface PartPlan {
 	readonly joints: number;
 	/** Least joints that the runs need whatever the plan. */
 	readonly leastJoints: number;
+	/** Price of one joint in cents. */
+	readonly jointCents: number;
 	readonly cannot: readonly CannotDivide[];
-	/** True when joints were placed by rule though the solver may place them. */
-	readonly byRule: boolean;
+	/** For runs whose joints the solver may place: what is proven of the metal, and how they were placed. */
+	readonly free: { readonly boundCents: number; readonly placed: 'rule' | 'search' } | null;
 	readonly checked: boolean;
 }
 
@@ -60,9 +66,7 @@ export function planPart(problem: FileProblem, scale: CostScale, options: SolveO
 		.filter((plan) => possibleNumbers(plan, 1).length === 0)
 		.map((plan) => cannotDivide(plan, print));
 	if (cannot.length > 0) return undivided(problem, scale, cannot, options);
-	const runs = chooseDivisions(problem, scale, plans, options);
-	const packing = toPacking(problem, scale, runs);
-	const plan = solve(packing, options);
+	const { runs, plan, packing, free } = placeAndSolve(problem, scale, plans, options);
 	const covered = runs.every((run, i) => coversRun(plans[i]!, run));
 	return {
 		packing,
@@ -70,9 +74,71 @@ export function planPart(problem: FileProblem, scale: CostScale, options: SolveO
 		runs,
 		joints: runs.reduce((sum, run) => sum + run.joints, 0),
 		leastJoints: plans.reduce((sum, one) => sum + possibleNumbers(one, 1)[0]! - 1, 0),
+		jointCents: problem.jointCents,
 		cannot: [],
-		byRule: plans.some((one, i) => one.run.joints === 'anywhere' && runs[i]!.joints > 0),
+		free,
 		checked: covered && checkPlan(packing, plan).ok
+	};
+}
+
+type Solved = Pick<PartPlan, 'runs' | 'plan' | 'packing' | 'free'>;
+
+/** Solves with joints placed by rule, and with joints placed by search where runs leave them free. */
+function placeAndSolve(
+	problem: FileProblem,
+	scale: CostScale,
+	plans: readonly RunPlan[],
+	options: SolveOptions
+): Solved {
+	const started = options.clock();
+	const byRule = chooseDivisions(problem, scale, plans, options);
+	const open = plans.map((one, i) => one.run.joints === 'anywhere' && byRule[i]!.joints > 0);
+	const lapped = plans.every((one, i) => !open[i] || one.toDivide.joint.kind === 'lap');
+	const left = () => Math.max(50, options.timeLimitMs - (options.clock() - started));
+	const finish = (runs: readonly CutRun[], free: PartPlan['free']): Solved => {
+		const packing = toPacking(problem, scale, runs);
+		return { runs, packing, free, plan: solve(packing, { ...options, timeLimitMs: left() }) };
+	};
+	if (!open.includes(true)) return finish(byRule, null);
+	if (!options.engine || !lapped) return finish(byRule, { boundCents: 0, placed: 'rule' });
+	const work = startWork(options.engine, options, started + options.timeLimitMs * 0.7);
+	const found = placeFree(problem, scale, plans, byRule, open, work);
+	const boundCents = found?.boundCents ?? 0;
+	const searched = found?.runs ? finish(found.runs, { boundCents, placed: 'search' }) : null;
+	const cost = searched ? withJoints(problem, searched) : Infinity;
+	if (searched && cost <= quickCost(problem, scale, byRule)) return searched;
+	const ruled = finish(byRule, { boundCents, placed: 'rule' });
+	return withJoints(problem, ruled) < cost ? ruled : searched!;
+}
+
+const withJoints = (problem: FileProblem, { plan, runs }: Solved): number =>
+	plan.sticks.length === 0
+		? Infinity
+		: plan.costCents + runs.reduce((sum, run) => sum + run.joints, 0) * (problem.jointCents + 1e-6);
+
+/** Joints of the open runs placed by search, all other runs as they are. */
+function placeFree(
+	problem: FileProblem,
+	scale: CostScale,
+	plans: readonly RunPlan[],
+	byRule: readonly CutRun[],
+	open: readonly boolean[],
+	work: Work
+): { readonly runs: CutRun[] | null; readonly boundCents: number } | null {
+	const fixed = toPacking(
+		problem,
+		scale,
+		byRule.filter((_, i) => !open[i])
+	);
+	const chosen = plans.filter((_, i) => open[i]);
+	const found = planFreeRuns(fixed, chosen.map(toPlace), work);
+	if (found === null) return null;
+	if (found.lengths === null) return { runs: null, boundCents: found.boundCents };
+	const cut = chosen.map((plan, r) => cutRun(plan, found.lengths![r]!.map(length)));
+	let next = 0;
+	return { runs: byRule.map((run, i) => (open[i] ? cut[next++]! : run)), ...found } as {
+		runs: CutRun[];
+		boundCents: number;
 	};
 }
 
@@ -92,7 +158,7 @@ function undivided(
 ): PartPlan {
 	const packing = { ...toPacking(problem, scale, []), pieces: [] };
 	const plan = solve(packing, options);
-	const none = { runs: [], joints: 0, leastJoints: 0, byRule: false };
+	const none = { runs: [], joints: 0, leastJoints: 0, jointCents: 0, free: null };
 	return { packing, plan, cannot, checked: true, ...none };
 }
 

@@ -45,29 +45,41 @@ export function printPart(problem: FileProblem, scale: CostScale, part: PartPlan
 	};
 }
 
-/** A plan whose checker found a fault is never called proven. */
-const statusOf = (part: PartPlan): FileStatus =>
-	part.plan.status === 'proven' && (part.byRule || !part.checked) ? 'best found' : part.plan.status;
+/**
+ * A plan whose checker found a fault is never called proven; one with free joints only when its metal
+ * meets the bound that holds wherever the joints fall, and no joint has a price.
+ */
+function statusOf(part: PartPlan): FileStatus {
+	const { plan, free, checked, joints, leastJoints } = part;
+	if (plan.status !== 'proven' && plan.status !== 'best found') return plan.status;
+	const closed = free
+		? plan.costCents <= free.boundCents && (part.jointCents === 0 || joints === leastJoints)
+		: plan.status === 'proven';
+	return closed && checked ? 'proven' : 'best found';
+}
 
-const reasonOf = (part: PartPlan): string =>
-	!part.checked ? 'check failed' : part.byRule ? 'rule' : (part.plan.reason ?? 'time');
+function reasonOf(part: PartPlan): string {
+	if (!part.checked) return 'check failed';
+	if (part.free?.placed === 'rule') return 'rule';
+	return part.plan.reason ?? 'time';
+}
 
 export const costCents = (problem: FileProblem, part: PartPlan): number =>
 	part.plan.costCents + part.joints * problem.jointCents;
 
-/** What is proven of the whole part. Joints placed by rule leave only what any placement must pay. */
-export function boundCents(problem: FileProblem, part: PartPlan): number {
-	const metal = part.byRule ? 0 : part.plan.bound.costCents;
-	return metal + part.leastJoints * problem.jointCents;
-}
+/** What is proven of the metal, wherever free joints fall. */
+const metalBound = ({ free, plan }: PartPlan): number =>
+	free ? free.boundCents : plan.bound.costCents;
+
+export const boundCents = (problem: FileProblem, part: PartPlan): number =>
+	metalBound(part) + part.leastJoints * problem.jointCents;
 
 function boundOf(problem: FileProblem, scale: CostScale, part: PartPlan) {
-	const cents = boundCents(problem, part);
-	const metal = part.byRule ? 0 : part.plan.bound.costCents;
+	const metal = metalBound(part);
 	const dearest = Math.max(0, ...part.packing.stock.map((stock) => stock.priceCents));
 	const lengths = dearest > 0 ? Math.ceil(metal / dearest) : 0;
-	const proof = part.byRule ? 'none' : part.plan.bound.proof;
-	return { cost: scale.print(cents), lengths, proof };
+	const proof = part.free ? (metal > 0 ? 'certificate' : 'none') : part.plan.bound.proof;
+	return { cost: scale.print(boundCents(problem, part)), lengths, proof };
 }
 
 function gapOf(problem: FileProblem, part: PartPlan): number {
