@@ -2,7 +2,7 @@
  * Alternates side by side: the same runs divided for another stock length or another lap, packed at typing
  * speed. The same arithmetic as a plan's, without an engine: what it cannot prove it calls an estimate.
  */
-import { length, ZERO, type Length } from '../lengths/length';
+import { ZERO, type Length } from '../lengths/length';
 import { describeProblem } from '../result';
 import type { PackingPlan, PackingProblem } from '../plan/plan';
 import { solve } from '../solver/solve';
@@ -10,7 +10,7 @@ import type { ProfileRules } from '../takeoff/resolve-run';
 import { firstComeLengths } from '../waste/first-come';
 import { ledgerOf, type Ledger, type LedgerCut } from '../waste/ledger';
 import { pieceMetal } from '../waste/piece-metal';
-import { inBasisPoints, wasteShare } from '../waste/shares';
+import { wasteShare, type Share } from '../waste/shares';
 import {
 	runFigures,
 	toPackingProblem,
@@ -39,9 +39,8 @@ export interface AlternateFigures {
 	/** Least cost that any plan of these pieces can have. */
 	readonly boundCents: number;
 	readonly proven: boolean;
-	/** Kerf, squaring and scrap over metal bought, in hundredths of a percent. */
-	readonly wasteBp: number;
-	readonly bought: Length;
+	/** Kerf, squaring and scrap, over metal bought. */
+	readonly waste: Share;
 	/** What cutting first come, first served would take; null for several stock lengths. */
 	readonly firstCome: number | null;
 	/** Runs that cannot be divided this way, each in one sentence. */
@@ -113,8 +112,7 @@ export function figuresOfPlan(
 		costCents: plan.costCents,
 		boundCents: plan.bound.costCents,
 		proven: plan.status === 'proven' || problem.pieces.length === 0,
-		wasteBp: inBasisPoints(wasteShare(ledger)),
-		bought: ledger.newMetal,
+		waste: wasteShare(ledger),
 		firstCome: firstComeOf(problem)
 	};
 }
@@ -159,32 +157,38 @@ function ledgerOfPlan(
 	);
 }
 
-/** Returns the sum of figures over several profiles and materials, for one alternate of the whole job. */
-export function addFigures(
-	key: string,
-	parts: readonly AlternateFigures[]
-): Omit<AlternateFigures, 'firstCome' | 'bought'> {
-	const total = (pick: (of: AlternateFigures) => number) =>
-		parts.reduce((sum, part) => sum + pick(part), 0);
-	return {
-		key,
-		pieces: total((of) => of.pieces),
-		joints: total((of) => of.joints),
-		lengths: total((of) => of.lengths),
-		costCents: total((of) => of.costCents),
-		boundCents: total((of) => of.boundCents),
-		proven: parts.every((part) => part.proven),
-		// Feet of different girths do not add: the job's percentage is weighed by cost.
-		wasteBp: Math.round(
-			total((of) => of.wasteBp * of.costCents) /
-				Math.max(
-					1,
-					total((of) => of.costCents)
-				)
-		),
-		problems: parts.flatMap((part) => part.problems)
-	};
+/** The whole job for one alternate. */
+export interface JobFigures extends Omit<AlternateFigures, 'firstCome' | 'waste'> {
+	/** Waste over metal bought by weight, in hundredths of a percent. */
+	readonly wasteBp: number;
+	readonly firstCome: number | null;
 }
 
-/** Returns whole inches as laps to compare: the ones the trade uses first. */
-export const usualLaps = (inch: Length): Length[] => [2, 3, 4].map((of) => length(of * inch));
+/**
+ * Returns the sum of figures over several profiles and materials. Lengths of different girths do not add, so
+ * waste is weighed: `weight` is any measure of mass per length, the same for all parts.
+ */
+export function addFigures(
+	key: string,
+	parts: readonly { readonly figures: AlternateFigures; readonly weight: number }[]
+): JobFigures {
+	const total = (pick: (of: AlternateFigures) => number) =>
+		parts.reduce((sum, { figures }) => sum + pick(figures), 0);
+	const weighed = (pick: (of: AlternateFigures) => number) =>
+		parts.reduce((sum, { figures, weight }) => sum + pick(figures) * weight, 0);
+	const of = weighed((one) => one.waste.of);
+	return {
+		key,
+		pieces: total((one) => one.pieces),
+		joints: total((one) => one.joints),
+		lengths: total((one) => one.lengths),
+		costCents: total((one) => one.costCents),
+		boundCents: total((one) => one.boundCents),
+		proven: parts.every(({ figures }) => figures.proven),
+		wasteBp: of === 0 ? 0 : Math.round((10_000 * weighed((one) => one.waste.part)) / of),
+		firstCome: parts.some(({ figures }) => figures.firstCome === null)
+			? null
+			: total((one) => one.firstCome ?? 0),
+		problems: parts.flatMap(({ figures }) => figures.problems)
+	};
+}

@@ -34,6 +34,7 @@ export const listMaterialNames = (db: Queryable, shopId: string) =>
 			finish: materials.finish,
 			colourName: materials.colourName,
 			colourCode: materials.colourCode,
+			gramsPerSquareMetre: materials.gramsPerSquareMetre,
 			archivedAt: materials.archivedAt
 		})
 		.from(materials)
