@@ -131,26 +131,29 @@ test('a price is typed as 18.40 and a bad one is named', async ({ page }) => {
 	await expect(price).toHaveValue('18.40');
 });
 
-test('every list and form of the catalog is free of axe findings, in both themes', async ({
-	page
-}) => {
-	await signIn(page, 'estimator');
-	for (const scheme of ['light', 'dark'] as const) {
-		await page.emulateMedia({ colorScheme: scheme });
-		for (const path of [
-			'/profiles',
-			'/materials',
-			'/stock',
-			'/suppliers',
-			'/rack',
-			'/materials/new',
-			'/stock/new',
-			'/suppliers/new',
-			'/profiles/new',
-			'/profiles/new?kind=coping'
-		]) {
+const PAGES = [
+	'/profiles',
+	'/materials',
+	'/stock',
+	'/suppliers',
+	'/rack',
+	'/materials/new',
+	'/stock/new',
+	'/suppliers/new',
+	'/profiles/new',
+	'/profiles/new?kind=coping'
+];
+
+for (const colorScheme of ['light', 'dark'] as const) {
+	test(`lists and forms of the catalog are free of axe findings in the ${colorScheme} theme`, async ({
+		page
+	}) => {
+		test.setTimeout(180_000);
+		await page.emulateMedia({ colorScheme });
+		await signIn(page, 'estimator');
+		for (const path of PAGES) {
 			await page.goto(path);
 			await expectNoAxeFindings(page);
 		}
-	}
-});
+	});
+}
