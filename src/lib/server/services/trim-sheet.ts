@@ -1,6 +1,7 @@
 import type { ReleaseSnapshot } from '../../domain/plan/snapshot';
 import { trimListOf } from '../../domain/plan/trim-list';
 import { siteRunsOnHold } from './site-list';
+import { m } from '../../paraglide/messages';
 import type { Context } from '../context';
 import { findJob } from '../queries/jobs';
 import { findRelease, listLiveReleases } from '../queries/releases';
@@ -9,6 +10,7 @@ import { qrSymbol } from '../http/qr';
 import {
 	cuttingFacts,
 	groupFacts,
+	jobTitle,
 	releaseFacts,
 	revisionTitle,
 	runFacts,
@@ -35,7 +37,7 @@ export function getTrimSheet(ctx: Context, jobId: string, releaseId: string, ori
 		job: { id: jobId, number: snapshot.job.number, name: snapshot.job.name, units },
 		revision: revisionTitle(snapshot),
 		inForce: live.some((release) => release.id === releaseId),
-		printedAt: shopTime(ctx.now, snapshot.shop.timeZone),
+		lines: headLines(ctx, snapshot),
 		qr: qrSymbol(`${origin}/jobs/${jobId}/releases/${releaseId}`),
 		leftOut: snapshot.leftOut,
 		sheets: snapshot.elevations.map((elevation) => ({
@@ -50,6 +52,17 @@ export function getTrimSheet(ctx: Context, jobId: string, releaseId: string, ori
 	};
 }
 export type TrimSheetData = NonNullable<ReturnType<typeof getTrimSheet>>;
+
+/** What every page says below its title. */
+const headLines = (ctx: Context, snapshot: ReleaseSnapshot): string[] => [
+	jobTitle(snapshot),
+	m.site_sheet_released({
+		time: shopTime(snapshot.releasedAt, snapshot.shop.timeZone),
+		by: snapshot.releasedBy
+	}),
+	m.sheets_viewpoint_text(),
+	m.site_sheet_printed({ time: shopTime(ctx.now, snapshot.shop.timeZone) })
+];
 
 /** Profile, material and colour code of every group an elevation uses. */
 const groupsOn = (snapshot: ReleaseSnapshot, elevationId: string): string[] =>
