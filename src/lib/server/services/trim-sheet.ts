@@ -95,3 +95,15 @@ export function getMeasureSheet(ctx: Context, jobId: string, origin: string) {
 	};
 }
 export type MeasureSheetData = NonNullable<ReturnType<typeof getMeasureSheet>>;
+
+/** Addresses of the papers of one elevation: its trim list in force, if any, and the measure sheet of its job. */
+export function sheetLinks(ctx: Context, jobId: string, elevationId: string) {
+	const holding = listLiveReleases(ctx.db, ctx.shopId, jobId).filter((release) =>
+		(release.snapshot as ReleaseSnapshot).elevations.some(({ id }) => id === elevationId)
+	);
+	const latest = holding.at(-1);
+	return {
+		trimList: latest ? `/jobs/${jobId}/releases/${latest.id}/trim-list` : null,
+		measureSheet: `/jobs/${jobId}/measure-sheet`
+	};
+}

@@ -7,15 +7,21 @@ import { acceptHoldTo } from '$lib/server/services/accept-hold-to';
 import { markFitted } from '$lib/server/services/mark-fitted';
 import { recordMeasure } from '$lib/server/services/record-measure';
 import { getSiteList } from '$lib/server/services/site-list';
+import { sheetLinks } from '$lib/server/services/trim-sheet';
 import type { ActAnswer } from '$lib/forms/site';
 import { fail } from '@sveltejs/kit';
 import type { Actions, PageServerLoad } from './$types';
 
 /** The field trim list of one elevation and its runs on hold. */
 export const load: PageServerLoad = ({ locals, params }) => {
-	const list = getSiteList(requireContext(locals), params.jobId, params.elevationId);
+	const context = requireContext(locals);
+	const list = getSiteList(context, params.jobId, params.elevationId);
 	if (!list) return notFound('elevation');
-	return { list, holdToOpIds: Object.fromEntries(list.held.map((run) => [run.id, newId()])) };
+	return {
+		list,
+		holdToOpIds: Object.fromEntries(list.held.map((run) => [run.id, newId()])),
+		sheets: sheetLinks(context, params.jobId, params.elevationId)
+	};
 };
 
 const ended = ({ state, sentence }: ActAnswer) =>
