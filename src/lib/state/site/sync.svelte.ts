@@ -45,11 +45,13 @@ export class SiteSync {
 		const seen = () => document.visibilityState === 'visible' && wake();
 		const timer = setInterval(wake, RETRY_MS);
 		window.addEventListener('online', wake);
+		window.addEventListener('offline', wake);
 		document.addEventListener('visibilitychange', seen);
 		void this.#begin();
 		return () => {
 			clearInterval(timer);
 			window.removeEventListener('online', wake);
+			window.removeEventListener('offline', wake);
 			document.removeEventListener('visibilitychange', seen);
 		};
 	}
