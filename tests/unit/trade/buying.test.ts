@@ -1,20 +1,22 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { feet } from '$lib/domain/lengths/length';
 import { priceOf } from '$lib/domain/trade/buying';
 import { formatCents, parseCents, typeCents } from '$lib/domain/trade/money';
-import { countedRelease, needOf, type JobNeed } from '$lib/domain/trade/needs';
+import { jobLengths, needOf, type JobStage, type StockAsked } from '$lib/domain/trade/needs';
 
-const job = (over: Partial<JobNeed>): JobNeed => ({
+const asked = (planned: number, marginPercent = 0) => ({ planned, marginPercent });
+const stock = (over: Partial<StockAsked>): StockAsked => ({
+	stockLengthId: 'ten',
+	nominal: feet(10),
 	buy: null,
 	cut: null,
-	leftOut: false,
+	claimed: 0,
 	...over
 });
-const lengths = (planned: number, marginPercent = 0, claimed = 0) => ({
-	planned,
-	marginPercent,
-	claimed
-});
+const twelve = { stockLengthId: 'twelve', nominal: feet(12) };
+const required = (of: readonly StockAsked[], stage: JobStage) =>
+	jobLengths(of, stage).map((one) => one.required);
 
 describe('what is to buy', () => {
 	it.each([
@@ -28,46 +30,65 @@ describe('what is to buy', () => {
 	])(
 		'%i planned, %i %% margin, %i on hand, %i on order',
 		(planned, margin, onHand, onOrder, ...out) => {
-			const need = needOf([job({ buy: lengths(planned, margin) })], { onHand, onOrder });
+			const job = jobLengths([stock({ buy: asked(planned, margin) })], 'to buy');
+			const need = needOf(job, { onHand, onOrder });
 			expect([need.spare, need.toBuy, need.surplus]).toEqual(out);
 		}
 	);
 
 	it('a job counts once: its release to cut supersedes its release to buy', () => {
-		const both = job({ buy: lengths(40, 5), cut: lengths(36) });
-		expect(countedRelease(both)).toEqual(lengths(36));
-		expect(needOf([both, job({ buy: lengths(4) })], { onHand: 0, onOrder: 0 }).toBuy).toBe(40);
+		const both = stock({ buy: asked(40, 5), cut: asked(36) });
+		expect(required([both], 'to cut')).toEqual([36]);
+		expect(required([stock({ buy: asked(40) })], 'to cut')).toEqual([0]);
 	});
 
-	it('while runs on hold are left out, the larger of the two counts', () => {
-		const held = job({ buy: lengths(40, 5), cut: lengths(36), leftOut: true });
-		expect(needOf([held], { onHand: 0, onOrder: 0 }).required).toBe(42);
-		const grown = job({ buy: lengths(30), cut: lengths(36), leftOut: true });
-		expect(needOf([grown], { onHand: 0, onOrder: 0 }).required).toBe(36);
+	it('while runs on hold are left out, what was bought ahead beyond the release to cut still counts', () => {
+		const held = stock({ buy: asked(40, 5), cut: asked(36) });
+		expect(jobLengths([held], 'to cut, runs on hold')).toMatchObject([
+			{ planned: 36, ahead: 6, required: 42 }
+		]);
+		const grown = stock({ buy: asked(30), cut: asked(36) });
+		expect(required([grown], 'to cut, runs on hold')).toEqual([36]);
+	});
+
+	it('other lengths in the release to cut are not bought twice', () => {
+		// 108 ft bought ahead, 80 ft released to cut in another mix: 28 ft more, as three tens.
+		const mix = [
+			stock({ buy: asked(6), cut: asked(2) }),
+			stock({ ...twelve, buy: asked(4), cut: asked(5) })
+		];
+		expect(required(mix, 'to cut, runs on hold')).toEqual([5, 5]);
 	});
 
 	it('lengths a release has claimed are covered and not bought again', () => {
-		const held = job({ buy: lengths(40, 5, 36), cut: lengths(36, 0, 36), leftOut: true });
-		expect(needOf([held], { onHand: 6, onOrder: 0 })).toMatchObject({ required: 6, toBuy: 0 });
+		const claimed = stock({ buy: asked(40, 5), cut: asked(36), claimed: 36 });
+		expect(required([claimed], 'to cut, runs on hold')).toEqual([6]);
 		// One job's claims never cover another job's need.
-		const other = job({ cut: lengths(5, 0, 9) });
-		expect(needOf([other, job({ cut: lengths(7) })], { onHand: 0, onOrder: 0 }).toBuy).toBe(7);
+		const jobs = [stock({ cut: asked(5), claimed: 9 }), stock({ cut: asked(7) })].flatMap((one) =>
+			jobLengths([one], 'to cut')
+		);
+		expect(needOf(jobs, { onHand: 0, onOrder: 0 }).toBuy).toBe(7);
 	});
 
-	it('covers exactly what is required, whatever is held', () => {
-		const count = fc.integer({ min: 0, max: 500 });
+	it('covers exactly what is required; never less than the release to cut, nor more than either plan and a stick', () => {
+		const count = fc.integer({ min: 0, max: 300 });
+		const counts = fc.tuple(count, count, count, count, count, count);
 		fc.assert(
-			fc.property(
-				count,
-				count,
-				count,
-				fc.integer({ min: 0, max: 50 }),
-				(n, hand, order, margin) => {
-					const need = needOf([job({ cut: lengths(n, margin) })], { onHand: hand, onOrder: order });
-					expect(need.onHand + need.onOrder + need.toBuy - need.surplus).toBe(need.required);
-					expect(need.toBuy === 0 || need.surplus === 0).toBe(true);
-				}
-			)
+			fc.property(counts, ([buyTen, buyTwelve, cutTen, cutTwelve, hand, order]) => {
+				const of = [
+					stock({ buy: asked(buyTen), cut: asked(cutTen) }),
+					stock({ ...twelve, buy: asked(buyTwelve), cut: asked(cutTwelve) })
+				];
+				const job = jobLengths(of, 'to cut, runs on hold');
+				const need = needOf(job.slice(0, 1), { onHand: hand, onOrder: order });
+				expect(need.onHand + need.onOrder + need.toBuy - need.surplus).toBe(need.required);
+				expect(job[0]!.required).toBeGreaterThanOrEqual(cutTen);
+				expect(job[1]!.required).toBeGreaterThanOrEqual(cutTwelve);
+				const metal = job[0]!.required * 10 + job[1]!.required * 12;
+				const most = Math.max(buyTen * 10 + buyTwelve * 12, cutTen * 10 + cutTwelve * 12);
+				expect(metal).toBeLessThan(most + 12);
+				expect(metal).toBeGreaterThanOrEqual(most);
+			})
 		);
 	});
 });

@@ -37,6 +37,7 @@ export interface NeedView {
 		readonly planned: number;
 		readonly spare: number;
 		readonly marginPercent: number;
+		readonly ahead: number;
 		readonly leftOut: number;
 	}[];
 	readonly needBy: string | null;

@@ -1,37 +1,68 @@
-/** Lengths that one release asks of one stock length. */
-export interface ReleasedLengths {
-	/** New lengths in the released plan, whether or not they are on hand by now. */
+import type { Length } from '../lengths/length';
+
+/** New lengths in a released plan and the whole percent bought on top of them. */
+export interface Asked {
 	readonly planned: number;
-	/** Whole percent bought on top. */
 	readonly marginPercent: number;
-	/** Full lengths on hand that the job's releases to cut have claimed for it, cut by now or not. */
+}
+
+/** What one job's releases ask of one stock length. */
+export interface StockAsked {
+	readonly stockLengthId: string;
+	readonly nominal: Length;
+	/** Newest release to buy; null when it asks for none of these. */
+	readonly buy: Asked | null;
+	/** Newest release to cut; null when it asks for none of these. */
+	readonly cut: Asked | null;
+	/** Full lengths on hand that the job's releases to cut have claimed, cut by now or not. */
 	readonly claimed: number;
 }
 
-/** What one job asks of one stock length. */
-export interface JobNeed<T extends ReleasedLengths = ReleasedLengths> {
-	readonly buy: T | null;
-	readonly cut: T | null;
-	/** Whether the release to cut left runs out that are on hold. */
-	readonly leftOut: boolean;
+/** What of one job counts for one stock length; whole lengths. */
+export interface JobLengths {
+	readonly stockLengthId: string;
+	readonly planned: number;
+	/** Extra lengths by the margin of a release to buy. */
+	readonly spare: number;
+	/** Lengths bought ahead for runs on hold that the release to cut left out. */
+	readonly ahead: number;
+	readonly claimed: number;
+	/** planned + spare + ahead − claimed, never below zero. */
+	readonly required: number;
 }
 
 /** Returns the extra lengths a margin asks for: a started length is a whole one. */
-export const marginLengths = (of: ReleasedLengths): number =>
+export const marginLengths = (of: Asked): number =>
 	Math.ceil((of.planned * of.marginPercent) / 100);
 
-/** Returns planned + margin − claimed, never below zero. */
-export const openLengths = (of: ReleasedLengths): number =>
-	Math.max(0, of.planned + marginLengths(of) - of.claimed);
+const total = (of: Asked | null): number => (of ? of.planned + marginLengths(of) : 0);
+
+/** How far the job has come: whether there is a release to cut, and whether it left runs on hold out. */
+export type JobStage = 'to buy' | 'to cut' | 'to cut, runs on hold';
 
 /**
- * Returns the one release of a job that counts for a stock length, null when there is none. A release to cut
- * supersedes the release to buy of the same job; while it leaves runs on hold out, the one with more still
- * open counts, so that metal bought ahead for those runs is neither forgotten nor bought twice.
+ * Returns what counts of one job, for the stock lengths of one profile in one material. A release to cut
+ * supersedes the release to buy. While it leaves runs on hold out, the metal that was bought ahead beyond it
+ * still counts, in the lengths it was bought in: it is for those runs, neither forgotten nor bought twice.
  */
-export function countedRelease<T extends ReleasedLengths>(of: JobNeed<T>): T | null {
-	if (!of.cut || !of.buy) return of.cut ?? of.buy;
-	return of.leftOut && openLengths(of.buy) > openLengths(of.cut) ? of.buy : of.cut;
+export function jobLengths(stock: readonly StockAsked[], stage: JobStage): JobLengths[] {
+	const metal = (kind: 'buy' | 'cut') =>
+		stock.reduce((sum, one) => sum + total(one[kind]) * one.nominal, 0);
+	let aheadMetal = stage === 'to cut, runs on hold' ? metal('buy') - metal('cut') : 0;
+	return stock.map((one) => {
+		const counted = stage === 'to buy' ? one.buy : one.cut;
+		const beyond = Math.max(0, total(one.buy) - total(one.cut));
+		const ahead = aheadMetal > 0 ? Math.min(beyond, Math.ceil(aheadMetal / one.nominal)) : 0;
+		aheadMetal -= ahead * one.nominal;
+		return {
+			stockLengthId: one.stockLengthId,
+			planned: counted?.planned ?? 0,
+			spare: counted ? marginLengths(counted) : 0,
+			ahead,
+			claimed: one.claimed,
+			required: Math.max(0, total(counted) + ahead - one.claimed)
+		};
+	});
 }
 
 /** Full lengths of one stock length, wherever they are. */
@@ -45,8 +76,8 @@ export interface Holdings {
 export interface Need extends Holdings {
 	readonly planned: number;
 	readonly spare: number;
+	readonly ahead: number;
 	readonly claimed: number;
-	/** What is still to be covered, job by job: planned + spare − claimed, never below zero. */
 	readonly required: number;
 	/** required − on hand − on order, never below zero. */
 	readonly toBuy: number;
@@ -55,16 +86,11 @@ export interface Need extends Holdings {
 }
 
 /** Returns what is missing of one stock length over all jobs; counts of whole lengths. */
-export function needOf(jobs: readonly JobNeed[], held: Holdings): Need {
-	const sum = { planned: 0, spare: 0, claimed: 0, required: 0 };
-	for (const job of jobs) {
-		const counted = countedRelease(job);
-		if (!counted) continue;
-		sum.planned += counted.planned;
-		sum.spare += marginLengths(counted);
-		sum.claimed += counted.claimed;
-		sum.required += openLengths(counted);
-	}
+export function needOf(jobs: readonly Omit<JobLengths, 'stockLengthId'>[], held: Holdings): Need {
+	const sum = { planned: 0, spare: 0, ahead: 0, claimed: 0, required: 0 };
+	for (const job of jobs)
+		for (const term of ['planned', 'spare', 'ahead', 'claimed', 'required'] as const)
+			sum[term] += job[term];
 	const missing = sum.required - held.onHand - held.onOrder;
 	return { ...held, ...sum, toBuy: Math.max(0, missing), surplus: Math.max(0, -missing) };
 }

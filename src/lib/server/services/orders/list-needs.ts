@@ -43,8 +43,11 @@ export interface Needs {
 }
 
 function readKnown(ctx: Context, timeZone: string): Known {
+	const released = listReleasedStock(ctx.db, ctx.shopId);
+	const ids = [...new Set(released.map((one) => one.stockLengthId))];
 	return {
-		released: listReleasedStock(ctx.db, ctx.shopId),
+		released,
+		stock: listBuyable(ctx.db, ctx.shopId, ids),
 		claimed: listClaimedSticks(ctx.db, ctx.shopId),
 		free: listFreeSticks(ctx.db, ctx.shopId),
 		onOrder: listOnOrder(ctx.db, ctx.shopId),
@@ -122,8 +125,7 @@ export function listNeeds(ctx: Context): Needs {
 	const shop = findShopHead(ctx.db, ctx.shopId);
 	invariant(shop, 'the session names a shop that is gone');
 	const known = readKnown(ctx, shop.timeZone);
-	const ids = [...new Set(known.released.map((one) => one.stockLengthId))];
-	const stock = listBuyable(ctx.db, ctx.shopId, ids);
+	const { stock } = known;
 	const suppliers = listSuppliers(ctx.db, ctx.shopId, { archived: 'all' });
 	const supplierIds = [...new Set(stock.map((one) => one.supplierId))];
 	return {

@@ -51,7 +51,8 @@ const jobsText = (row: NeedRow | undefined): string =>
 		.map((job) => {
 			const spare =
 				job.spare > 0 ? ` incl. ${job.spare} spare (${job.marginPercent} % margin)` : '';
-			return `${job.number} ${job.release}${spare}`;
+			const ahead = job.ahead > 0 ? ` incl. ${job.ahead} ahead for runs on hold` : '';
+			return `${job.number} ${job.release}${spare}${ahead}`;
 		})
 		.join(', ')
 		.slice(0, 200);

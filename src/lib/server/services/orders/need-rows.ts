@@ -1,12 +1,11 @@
-import { invariant } from '../../../domain/invariant';
 import type { BuyingLine } from '../../../domain/trade/buying';
 import {
-	countedRelease,
-	marginLengths,
+	jobLengths,
 	needOf,
-	type JobNeed,
+	type JobLengths,
+	type JobStage,
 	type Need,
-	type ReleasedLengths
+	type StockAsked
 } from '../../../domain/trade/needs';
 import type {
 	Buyable,
@@ -24,12 +23,13 @@ export interface JobShare {
 	readonly number: string;
 	readonly name: string;
 	readonly dueOn: string | null;
-	readonly kind: 'buy' | 'cut';
 	/** `Rev A`, or `plan 2` for a release to buy. */
 	readonly release: string;
 	readonly planned: number;
 	readonly spare: number;
 	readonly marginPercent: number;
+	/** Bought ahead for runs on hold that the release to cut left out. */
+	readonly ahead: number;
 	/** Runs on hold that the release to cut left out. */
 	readonly leftOut: number;
 }
@@ -62,6 +62,8 @@ export interface NeedRow {
 
 /** Everything the rows are made from, read once. */
 export interface Known {
+	/** Every stock length that a release in force asks for. */
+	readonly stock: readonly Buyable[];
 	readonly released: readonly ReleasedStock[];
 	readonly claimed: ReturnType<typeof listClaimedSticks>;
 	readonly free: ReturnType<typeof listFreeSticks>;
@@ -72,46 +74,62 @@ export interface Known {
 	readonly withPrices: boolean;
 }
 
-type Counted = ReleasedStock & ReleasedLengths;
 const sumOf = (counts: readonly number[]): number => counts.reduce((sum, one) => sum + one, 0);
 
+const releaseOf = (known: Known, jobId: string, kind: 'buy' | 'cut') =>
+	known.released.find((one) => one.jobId === jobId && one.kind === kind);
+
+function stageOf(known: Known, jobId: string): JobStage {
+	const cut = releaseOf(known, jobId, 'cut');
+	if (!cut) return 'to buy';
+	return cut.leftOut > 0 ? 'to cut, runs on hold' : 'to cut';
+}
+
 /** What a job's releases ask of one stock length. */
-function jobNeed(jobId: string, stockLengthId: string, known: Known): JobNeed<Counted> {
+function askedOf(stock: Buyable, jobId: string, known: Known): StockAsked {
 	const ours = known.released.filter(
-		(one) => one.jobId === jobId && one.stockLengthId === stockLengthId
-	);
-	const claims = known.claimed.filter(
-		(one) => one.jobId === jobId && one.stockLengthId === stockLengthId
+		(one) => one.jobId === jobId && one.stockLengthId === stock.id
 	);
 	// Sticks begun under an earlier revision stay claimed by it, and are carried on in the newest one.
-	const claimed = sumOf(claims.map((one) => one.count));
-	const asked = (kind: 'buy' | 'cut'): Counted | null => {
-		const release = ours.find((one) => one.kind === kind);
-		if (!release) return null;
-		return { ...release, claimed };
+	const claims = known.claimed.filter(
+		(one) => one.jobId === jobId && one.stockLengthId === stock.id
+	);
+	return {
+		stockLengthId: stock.id,
+		nominal: stock.nominalNm,
+		buy: ours.find((one) => one.kind === 'buy') ?? null,
+		cut: ours.find((one) => one.kind === 'cut') ?? null,
+		claimed: sumOf(claims.map((one) => one.count))
 	};
-	const cut = known.released.find((one) => one.jobId === jobId && one.kind === 'cut');
-	return supersede({ buy: asked('buy'), cut: asked('cut'), leftOut: (cut?.leftOut ?? 0) > 0 }, cut);
 }
 
-/** A release to cut that uses none of this stock length supersedes the release to buy all the same. */
-function supersede(need: JobNeed<Counted>, cut: ReleasedStock | undefined): JobNeed<Counted> {
-	if (need.cut || !cut || !need.buy || need.leftOut) return need;
-	return { ...need, buy: null };
+/** What of a job counts for one stock length, among all lengths of its profile in its material. */
+function lengthsOf(stock: Buyable, jobId: string, known: Known): JobLengths {
+	const pair = known.stock.filter(
+		(one) => one.profileId === stock.profileId && one.materialId === stock.materialId
+	);
+	const asked = pair.map((one) => askedOf(one, jobId, known));
+	const counted = jobLengths(asked, stageOf(known, jobId));
+	return counted[pair.indexOf(stock)]!;
 }
 
-const shareOf = (release: Counted): JobShare => ({
-	jobId: release.jobId,
-	number: release.jobNumber,
-	name: release.jobName,
-	dueOn: release.dueOn,
-	kind: release.kind,
-	release: release.kind === 'cut' ? `Rev ${release.revision}` : `plan ${release.planNumber}`,
-	planned: release.planned,
-	spare: marginLengths(release),
-	marginPercent: release.marginPercent,
-	leftOut: release.kind === 'cut' ? release.leftOut : 0
-});
+function shareOf(jobId: string, lengths: JobLengths, known: Known): JobShare {
+	const cut = releaseOf(known, jobId, 'cut');
+	const release = cut ?? releaseOf(known, jobId, 'buy')!;
+	const { planned, spare, ahead } = lengths;
+	return {
+		jobId,
+		number: release.jobNumber,
+		name: release.jobName,
+		dueOn: release.dueOn,
+		release: cut ? `Rev ${cut.revision}` : `plan ${release.planNumber}`,
+		planned,
+		spare,
+		marginPercent: cut ? 0 : release.marginPercent,
+		ahead,
+		leftOut: cut?.leftOut ?? 0
+	};
+}
 
 export const earliest = (dates: readonly (string | null)[]): string | null =>
 	dates.filter((date) => date !== null).sort()[0] ?? null;
@@ -154,24 +172,28 @@ export function needRow(stock: Buyable, known: Known): Omit<NeedRow, 'proposal'>
 	const jobIds = new Set(
 		known.released.filter((one) => one.stockLengthId === stock.id).map((one) => one.jobId)
 	);
-	const asked = [...jobIds].map((jobId) => jobNeed(jobId, stock.id, known));
-	const counted = asked.map(countedRelease).filter((one) => one !== null);
+	const shares = [...jobIds]
+		.map((jobId) => ({ jobId, lengths: lengthsOf(stock, jobId, known) }))
+		.filter(({ lengths }) => lengths.planned + lengths.ahead + lengths.claimed > 0);
+	const jobs = shares.map(({ jobId, lengths }) => shareOf(jobId, lengths, known));
 	const orders = known.onOrder.filter((one) => one.stockLengthId === stock.id);
 	const drafts = orders.filter((one) => one.state === 'draft');
 	const sent = orders.filter((one) => one.state !== 'draft');
 	const free = known.free.filter((one) => one.stockLengthId === stock.id);
-	const need = needOf(asked, {
-		onHand: sumOf(free.map((one) => one.count)),
-		onOrder: sumOf(sent.map((one) => one.open))
-	});
-	invariant(need.required >= 0, 'a need is never below zero');
+	const need = needOf(
+		shares.map(({ lengths }) => lengths),
+		{
+			onHand: sumOf(free.map((one) => one.count)),
+			onOrder: sumOf(sent.map((one) => one.open))
+		}
+	);
 	const inDrafts = sumOf(drafts.map((one) => one.open));
 	const sources = free.length + (need.onOrder > 0 ? 1 : 0) + (need.toBuy > 0 ? 1 : 0);
 	return {
 		stock: shown(stock),
 		need,
-		jobs: counted.map(shareOf),
-		needBy: earliest(counted.map((one) => one.dueOn)),
+		jobs,
+		needBy: earliest(jobs.map((one) => one.dueOn)),
 		inDrafts,
 		drafts: drafts.map((one) => one.orderNumber),
 		missing: Math.max(0, need.toBuy - inDrafts),
