@@ -112,6 +112,15 @@ function uniqueTexts(db: Database, table: string): Set<string> {
 	return new Set(singles.map(([column]) => column!.name));
 }
 
+/** The filled-in message has arrived: it then carries the identifier of the one that went out. */
+function deliver(db: Database): void {
+	const [sent] = allRows(db, 'outbox');
+	const [arrived] = allRows(db, 'mailbox');
+	db.$client.prepare(`update outbox set kind = 'order' where id = ?`).run(sent!.id);
+	db.$client.prepare('update mailbox set id = ? where id = ?').run(sent!.id, arrived!.id);
+	db.$client.prepare('update mailbox_attachments set mailbox_id = ?').run(sent!.id);
+}
+
 /**
  * Copies everything of the only shop into a second one: the same rows, other ids, other people. Foreign keys are
  * checked afterwards, so the copy is as whole as the original.
@@ -120,10 +129,11 @@ export function addSecondShop(db: Database): { mine: string; theirs: string; fil
 	const mine = String(allRows(db, 'shops')[0]!.id);
 	db.$client.pragma('foreign_keys = OFF');
 	const filled = fillEmptyTables(db, mine);
+	deliver(db);
 	const twin = new Map<string, string>();
 	for (const table of names(db))
 		for (const row of allRows(db, table))
-			if (typeof row.id === 'string') twin.set(row.id, newId().slice(0, row.id.length));
+			if (typeof row.id === 'string' && !twin.has(row.id)) twin.set(row.id, newId());
 	const translate = (text: string) => text.replace(OPAQUE, (id) => twin.get(id) ?? id);
 	for (const table of names(db)) {
 		const unique = uniqueTexts(db, table);

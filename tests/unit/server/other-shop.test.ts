@@ -54,7 +54,8 @@ const TABLE_OF: Record<string, string> = {
 	user: 'users',
 	offcut: 'metal',
 	receipt: 'receipts',
-	message: 'mailbox'
+	message: 'mailbox',
+	attachment: 'mailbox_attachments'
 };
 
 let db: Database;
@@ -99,26 +100,49 @@ beforeAll(async () => {
 		requestId: 'test',
 		now: Date.now()
 	};
-});
+}, 180_000);
 afterAll(() => rmSync(folder, { recursive: true, force: true }));
 
-/** One own row for each parameter, children chosen below their parents. */
-function ownParams(names: readonly string[]): Record<string, string> {
-	const chosen: Record<string, string> = {};
-	for (const name of names) {
-		const table = tableOf(name);
-		if (!table) throw new Error(`which table does [${name}=id] name? Add it to TABLE_OF`);
-		const own = new Set(ids.mine.get(table));
-		const fits = (row: Record<string, unknown>) =>
-			Object.entries(chosen).every(([parent, id]) => {
-				const column = snake(parent);
-				return !(column in row) || row[column] === id;
-			});
-		const row = allRows(db, table).find((each) => own.has(String(each.id)) && fits(each));
-		if (!row) throw new Error(`the demo has no row of ${table} for [${name}=id]`);
-		chosen[name] = String(row.id);
+/** Own rows of a parameter's table that lie below the rows already chosen. */
+function ownRows(name: string, chosen: Record<string, string>): string[] {
+	const table = tableOf(name);
+	if (!table) throw new Error(`which table does [${name}=id] name? Add it to TABLE_OF`);
+	const own = new Set(ids.mine.get(table));
+	const fits = (row: Record<string, unknown>) =>
+		Object.entries(chosen).every(([parent, id]) => {
+			const column = snake(parent);
+			return !(column in row) || row[column] === id;
+		});
+	const rows = allRows(db, table).filter((row) => own.has(String(row.id)) && fits(row));
+	if (rows.length === 0) throw new Error(`no row of ${table} for [${name}=id]`);
+	return rows.map((row) => String(row.id));
+}
+
+/** Every choice of an own row for the last parameter, the first below it for those before. */
+function ownChoices(names: readonly string[]): Record<string, string>[] {
+	const last = names.at(-1);
+	if (!last) return [{}];
+	const above: Record<string, string> = {};
+	for (const name of names.slice(0, -1)) above[name] = ownRows(name, above)[0]!;
+	return ownRows(last, above).map((id) => ({ ...above, [last]: id }));
+}
+
+/** Own rows with which the page is there; the first ones where there is no page to ask. */
+async function ownParams(entry: Entry): Promise<Record<string, string>> {
+	const choices = ownChoices(paramsOf(entry.routeId));
+	if (entry.key !== 'GET') return choices[0]!;
+	for (const params of choices) {
+		const { status, leaked } = await ask(entry, { params });
+		expect(leaked).toEqual([]);
+		if (status !== 404) return params;
 	}
-	return chosen;
+	throw new Error(`${entry.routeId}: not there with any own row, so a 404 would prove nothing`);
+}
+
+/** The other shop's copy of an own row. */
+function twinOf(name: string, own: string): string {
+	const table = tableOf(name)!;
+	return ids.theirs.get(table)![ids.mine.get(table)!.indexOf(own)]!;
 }
 
 interface Call {
@@ -317,10 +341,10 @@ const changing = entries.filter(({ key }) => key !== 'GET');
 describe('rows of another shop named in the address', () => {
 	test.each(withParams.map((entry) => [title(entry), entry] as const))('%s', async (_, entry) => {
 		const names = paramsOf(entry.routeId);
-		const own = ownParams(names);
-		const bodies = entry.key === 'GET' ? [undefined] : [undefined, ...(await bodiesOf(entry))];
+		const own = await ownParams(entry);
+		const bodies = entry.key === 'GET' ? [undefined] : [undefined, (await bodiesOf(entry))[0]];
 		for (const name of names) {
-			const params = { ...own, [name]: ids.theirs.get(tableOf(name)!)![0]! };
+			const params = { ...own, [name]: twinOf(name, own[name]!) };
 			for (const body of bodies) {
 				const answer = await ask(entry, { params, body });
 				const refused = (entry.key === 'GET' ? [404] : [400, 404, 422]).includes(answer.status);
@@ -331,17 +355,13 @@ describe('rows of another shop named in the address', () => {
 				expect(answer.touched).toEqual([]);
 			}
 		}
-		if (entry.key !== 'GET') return;
-		const control = await ask(entry, { params: own });
-		expect(control.status, 'the same with own rows is there').not.toBe(404);
-		expect(control.leaked).toEqual([]);
 	});
 
 	it('and identifiers that nobody has are answered alike', async () => {
 		for (const entry of withParams.filter(({ key }) => key === 'GET')) {
-			const own = ownParams(paramsOf(entry.routeId));
+			const own = await ownParams(entry);
 			for (const name of paramsOf(entry.routeId)) {
-				const theirRow = ids.theirs.get(tableOf(name)!)![0]!;
+				const theirRow = twinOf(name, own[name]!);
 				const foreign = await ask(entry, { params: { ...own, [name]: theirRow } });
 				const unknown = await ask(entry, { params: { ...own, [name]: newId() } });
 				expect({ ...foreign, text: foreign.text.replaceAll(theirRow, '') }, title(entry)).toEqual({
@@ -355,7 +375,7 @@ describe('rows of another shop named in the address', () => {
 
 describe('rows of another shop named in a form or a body', () => {
 	test.each(changing.map((entry) => [title(entry), entry] as const))('%s', async (_, entry) => {
-		const params = ownParams(paramsOf(entry.routeId));
+		const params = await ownParams(entry);
 		for (const body of await bodiesOf(entry)) {
 			const answer = await ask(entry, { params, body });
 			expect(answer.status, shown(body)).toBeLessThan(500);

@@ -1,4 +1,6 @@
 import { correctForm, importIdForm, mappingForm, setAsideForm } from '$lib/forms/import';
+import type { Context } from '$lib/server/context';
+import { notFound } from '$lib/server/http/problem';
 import { requireJob } from '$lib/server/http/require-job';
 import { readForm } from '$lib/server/http/read-form';
 import {
@@ -15,6 +17,9 @@ import { getJob } from '$lib/server/services/jobs';
 import { isId } from '$lib/forms/id';
 import { fail, redirect } from '@sveltejs/kit';
 import type { Actions, PageServerLoad } from './$types';
+
+/** The shop's own job; another shop's answers like one that does not exist. */
+const jobOf = (ctx: Context, jobId: string) => getJob(ctx, jobId) ?? notFound('job');
 
 export const load: PageServerLoad = ({ locals, params, url }) => {
 	const { context, job } = requireJob(locals, params.jobId);
@@ -46,14 +51,14 @@ export const actions: Actions = {
 		if (!read.ok) return fail(400, { problems: read.problems, entered: read.entered });
 		return { problems: [], entered: read.entered, open: tryMapping(context, job, read.value) };
 	},
-	take: formAction(mappingForm, (ctx, input, jobId) => takeImport(ctx, getJob(ctx, jobId)!, input)),
+	take: formAction(mappingForm, (ctx, input, jobId) => takeImport(ctx, jobOf(ctx, jobId), input)),
 	correct: formAction(correctForm, (ctx, input, jobId) =>
-		correctRow(ctx, getJob(ctx, jobId)!, input)
+		correctRow(ctx, jobOf(ctx, jobId), input)
 	),
 	setAside: formAction(setAsideForm, (ctx, { importId, rowId }, jobId) =>
-		setRowAside(ctx, getJob(ctx, jobId)!, importId, rowId)
+		setRowAside(ctx, jobOf(ctx, jobId), importId, rowId)
 	),
 	undo: formAction(importIdForm, (ctx, { importId }, jobId) =>
-		undoImport(ctx, getJob(ctx, jobId)!, importId)
+		undoImport(ctx, jobOf(ctx, jobId), importId)
 	)
 };
