@@ -2,6 +2,7 @@ import { formatLength } from '../../domain/lengths/format';
 import type { MarkChange } from '../../domain/plan/snapshot';
 import type { PieceStep } from '../db/schema/plans';
 import type { PieceRow } from '../queries/pieces';
+import { endWords } from '../../words/pieces';
 
 /** A mark of a revision: the piece it names now (or named, when it was removed) and what became of it. */
 export interface ListedChange extends MarkChange {
@@ -11,12 +12,9 @@ export interface ListedChange extends MarkChange {
 const placeKey = (piece: PieceRow): string =>
 	[piece.runId, piece.copy, piece.kind, piece.sequence].join('/');
 
-const endWord = (end: PieceRow['left']): string =>
-	end === 'joint' ? 'joint' : end.closure ? `${end.kind} ${end.closure}` : end.kind;
-
 /** A piece in words: length and both ends as seen from outside. */
 export const describePiece = (piece: PieceRow, units: 'imperial' | 'metric'): string =>
-	`${formatLength(piece.lengthNm, { units })}, left ${endWord(piece.left)}, right ${endWord(piece.right)}`;
+	`${formatLength(piece.lengthNm, { units })}, left ${endWords(piece.left)}, right ${endWords(piece.right)}`;
 
 /**
  * The list of a revision by mark: new, changed (old and new value), removed, unchanged; how far the earlier
@@ -74,7 +72,7 @@ function compare(
 function adviseOn(was: PieceRow, now: PieceRow, step: string): MarkChange['advice'] {
 	if (!step) return '';
 	const sameEnds =
-		endWord(was.left) === endWord(now.left) && endWord(was.right) === endWord(now.right);
+		endWords(was.left) === endWords(now.left) && endWords(was.right) === endWords(now.right);
 	if (was.lengthNm === now.lengthNm && sameEnds) return 'keep';
 	return was.lengthNm >= now.lengthNm ? 'rework' : 'scrap';
 }

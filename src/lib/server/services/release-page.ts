@@ -1,6 +1,11 @@
 import type { ReleaseSnapshot } from '../../domain/plan/snapshot';
 import type { Context } from '../context';
-import { findRelease, listLiveReleases, listReleases } from '../queries/releases';
+import {
+	findRelease,
+	listLiveReleases,
+	listReleasedMarks,
+	listReleases
+} from '../queries/releases';
 
 /** A release with the snapshot its sheets print; undefined when the job has none such. */
 export function getRelease(ctx: Context, jobId: string, releaseId: string) {
@@ -68,4 +73,22 @@ export function getReleaseList(ctx: Context, jobId: string) {
 	const releases = listReleases(ctx.db, ctx.shopId, jobId);
 	const live = new Set(listLiveReleases(ctx.db, ctx.shopId, jobId).map((row) => row.id));
 	return releases.map((release) => ({ ...release, inForce: live.has(release.id) }));
+}
+
+/** Marks released earlier that no release in force names: metal that carries one is not for the building. */
+export function getSupersededMarks(ctx: Context, jobId: string) {
+	const live = listLiveReleases(ctx.db, ctx.shopId, jobId);
+	const named = new Set(
+		live.flatMap((row) =>
+			(row.snapshot as ReleaseSnapshot).elevations.flatMap(({ runs }) =>
+				runs.flatMap((run) => run.pieces.map((piece) => piece.mark))
+			)
+		)
+	);
+	const old = new Map<string, number>();
+	for (const { mark, lengthNm } of listReleasedMarks(ctx.db, ctx.shopId, jobId))
+		if (!named.has(mark)) old.set(mark, lengthNm);
+	return [...old]
+		.map(([mark, lengthNm]) => ({ mark, lengthNm }))
+		.sort((a, b) => a.mark.localeCompare(b.mark, 'en', { numeric: true }));
 }

@@ -1,7 +1,11 @@
 import { requireContext } from '$lib/server/auth/require';
-import { getReleaseList } from '$lib/server/services/release-page';
+import { getReleaseList, getSupersededMarks } from '$lib/server/services/release-page';
 import type { PageServerLoad } from './$types';
 
-export const load: PageServerLoad = ({ locals, params }) => ({
-	releases: getReleaseList(requireContext(locals), params.jobId)
-});
+export const load: PageServerLoad = ({ locals, params }) => {
+	const ctx = requireContext(locals);
+	return {
+		releases: getReleaseList(ctx, params.jobId),
+		superseded: getSupersededMarks(ctx, params.jobId)
+	};
+};
