@@ -68,10 +68,15 @@ export function seedCatalog(tx: Queryable, staff: DemoStaff, now: number): DemoC
 		'suppliers',
 		DEMO_SUPPLIERS.map(({ code, ...s }) => ({ ...s, id: suppliers[code]!, shopId, createdAt: now }))
 	);
-	seedStock(tx, shopId, catalog, suppliers, now);
-	seedRack(tx, staff, catalog, now);
+	const stock = seedStock(tx, shopId, catalog, suppliers, now);
+	seedRack(tx, staff, catalog, stock, now);
 	return catalog;
 }
+
+/** Identifiers of the stock lengths seeded, by `stockKey`. */
+type StockIds = ReadonlyMap<string, string>;
+const stockKey = (profile: string, material: string, nominal: Length) =>
+	`${profile} ${material} ${nominal}`;
 
 function seedStock(
 	tx: Queryable,
@@ -79,13 +84,16 @@ function seedStock(
 	catalog: DemoCatalog,
 	suppliers: Readonly<Record<string, string>>,
 	now: number
-): void {
+): StockIds {
+	const ids = new Map(
+		DEMO_STOCK.map((s) => [stockKey(s.profile, s.material, s.nominalNm), newId()] as const)
+	);
 	insertRows(
 		tx,
 		'stockLengths',
 		DEMO_STOCK.map(({ profile, material, nominalNm, ...stock }) => ({
 			...stock,
-			id: newId(),
+			id: ids.get(stockKey(profile, material, nominalNm))!,
 			shopId,
 			profileId: catalog.profiles[profile]!,
 			materialId: catalog.materials[material]!,
@@ -96,9 +104,16 @@ function seedStock(
 			createdAt: now
 		}))
 	);
+	return ids;
 }
 
-function seedRack(tx: Queryable, staff: DemoStaff, catalog: DemoCatalog, now: number): void {
+function seedRack(
+	tx: Queryable,
+	staff: DemoStaff,
+	catalog: DemoCatalog,
+	stock: StockIds,
+	now: number
+): void {
 	for (const { profile, material, long, ...item } of DEMO_METAL) {
 		const id = newId();
 		const actual = typed(long);
@@ -112,6 +127,7 @@ function seedRack(tx: Queryable, staff: DemoStaff, catalog: DemoCatalog, now: nu
 				...item,
 				...pair,
 				id,
+				stockLengthId: stock.get(stockKey(profile, material, actual)) ?? null,
 				actualNm: actual,
 				usableNm: actual,
 				squaringHookNm: length(0),
