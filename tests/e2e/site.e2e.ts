@@ -58,6 +58,7 @@ test('without signal: ticks are kept, survive a reload, and are saved once', asy
 	page,
 	context
 }) => {
+	test.slow();
 	await signIn(page, 'installer');
 	const path = await openElevation(page, /of [1-9]\d* fitted/);
 	await workerReady(page);
@@ -166,6 +167,7 @@ test('what the phone keeps holds no price, and signing out wipes it', async ({ p
 });
 
 test('the printable trim list names revision, viewpoint and cautions', async ({ page }) => {
+	test.slow();
 	await signIn(page, 'shop lead');
 	const path = await openElevation(page, /of [1-9]\d* fitted/);
 	const jobId = path.split('/')[2]!;
