@@ -10,6 +10,7 @@ import { Master, type Relaxation } from './master';
 import { reduce, type Model } from './model';
 import type { SolveOptions, SolveProgress } from './options';
 import { costOf, lengthsOf, mergeUses, type Pattern, type Use } from './pattern';
+import { polish } from './polish';
 import { packSequential } from './sequential';
 import { solveWhole } from './whole-number';
 import { seeded, startWork, type Work } from './work';
@@ -95,7 +96,9 @@ class Search {
 			return noPlan(this.problem, shown.length > 0 ? 'impossible' : 'stopped', shown, this.#bound);
 		}
 		const reason = this.#exhausted ? 'search' : cancelled ? 'cancelled' : 'time';
-		return buildPlan(this.problem, this.model, this.#best, this.#bound, reason);
+		const keep = (this.problem.keepOffcut + this.problem.kerf) / this.model.unit;
+		const uses = polish(this.model, this.#best, keep);
+		return buildPlan(this.problem, this.model, uses, this.#bound, reason);
 	}
 
 	#searchWith(master: Master, demand: readonly number[]): void {
