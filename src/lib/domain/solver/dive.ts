@@ -19,6 +19,8 @@ export interface DiveRules {
 	readonly pick: () => number;
 	/** Patterns are priced anew after each rounding; without, only the known ones are used. */
 	readonly generate: boolean;
+	/** One in so many of the open lengths is fixed in each step, at least one. */
+	readonly share: number;
 }
 
 /**
@@ -67,6 +69,10 @@ function fixSome(master: Master, depth: Depth, relaxation: Relaxation, rules: Di
 	const choice = Math.min(rules.pick(), Math.max(0, fractions.length - 1));
 	const chosen = fractions.splice(choice, 1)[0];
 	if (chosen && fix(depth, chosen.pattern, 1)) moved = true;
+	// Large jobs fix a share of what is open at once: a step each would take hundreds of relaxations.
+	const open = fractions.reduce((sum, one) => sum + one.value, 0);
+	const more = fractions.slice(0, Math.floor(open / rules.share));
+	for (const { pattern, value } of more) if (value >= 0.4 && fix(depth, pattern, 1)) moved = true;
 	for (const { pattern, value } of fractions)
 		if (value >= 0.8 && fix(depth, pattern, 1)) moved = true;
 	return moved;

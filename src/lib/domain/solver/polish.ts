@@ -26,7 +26,8 @@ export function polish(model: Model, uses: readonly Use[], keep: number): Use[] 
 	mergePairs(model, sticks, left);
 	spareRack(model, sticks);
 	gather(model, sticks, keep);
-	const polished = sticks.map((stick) => {
+	const cut = sticks.filter((stick) => stick.counts.some((count) => count > 0));
+	const polished = cut.map((stick) => {
 		return { pattern: toPattern(stick.bin, stick.counts), times: 1 };
 	});
 	return costOf(model, polished) <= costOf(model, uses) ? polished : [...uses];
@@ -55,7 +56,8 @@ function mergePairs(model: Model, sticks: Stick[], left: number[]): void {
 				const had = left[s]! + (s === one.bin ? 1 : 0) + (s === other.bin ? 1 : 0);
 				return bin.capacity >= both && bin.cost <= price && bin.cost > 0 && had > 0;
 			});
-			if (into < 0 || model.bins[one.bin]!.cost === 0 || model.bins[other.bin]!.cost === 0) continue;
+			if (into < 0 || model.bins[one.bin]!.cost === 0 || model.bins[other.bin]!.cost === 0)
+				continue;
 			left[one.bin] = left[one.bin]! + 1;
 			left[other.bin] = left[other.bin]! + 1;
 			left[into] = left[into]! - 1;
@@ -76,7 +78,9 @@ function spareRack(model: Model, sticks: Stick[]): void {
 		const others = sticks.filter((stick) => model.bins[stick.bin]!.cost > 0);
 		const spaces = others.map((stick) => stick.space);
 		const moves: { item: number; to: number }[] = [];
-		const all = [...rack.counts].flatMap((count, item) => Array.from({ length: count }, () => item));
+		const all = [...rack.counts].flatMap((count, item) =>
+			Array.from({ length: count }, () => item)
+		);
 		const fits = all.every((item) => {
 			const { size } = model.items[item]!;
 			let to = -1;
@@ -114,7 +118,7 @@ function gather(model: Model, sticks: Stick[], keep: number): void {
 		const gain = kept(a + d) + kept(b - d) - kept(a) - kept(b);
 		return gain > 0 || (gain === 0 && d > b - a);
 	};
-	for (let improved = true; improved && steps < MOST_STEPS; ) {
+	for (let improved = true; improved && steps < MOST_STEPS;) {
 		improved = false;
 		sticks.sort((a, b) => b.space - a.space);
 		for (const from of sticks) {
@@ -130,7 +134,6 @@ function gather(model: Model, sticks: Stick[], keep: number): void {
 			}
 		}
 	}
-	sticks.splice(0, sticks.length, ...sticks.filter((s) => s.counts.some((count) => count > 0)));
 }
 
 /** The largest piece to give that makes it better, alone or for a shorter one in exchange. */

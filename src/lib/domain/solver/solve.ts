@@ -122,7 +122,12 @@ class Search {
 		for (let attempt = from; attempt < to; attempt++) {
 			if (this.#closed() || this.#work!.over()) return;
 			const pick = () => (attempt < 2 ? 0 : Math.floor(random() * 3));
-			const rules = { target: this.#bound.costCents, pick, generate: attempt > 0 };
+			const rules = {
+				target: this.#bound.costCents,
+				pick,
+				generate: attempt > 0,
+				share: attempt < 2 ? 12 : Infinity
+			};
 			this.#offer(dive(master, root, rules), attempt === 0 ? 'rounding' : 'diving');
 			master.setRest(
 				this.model.items.map((item) => item.demand),
