@@ -89,6 +89,7 @@ it('WST-2: face metal of a divided run is its face, less the gaps at plates', ()
 			if (!result.ok || result.value.divided.pieces.length < 2) return;
 			const { divided } = result.value;
 			const metal = divided.pieces.map((piece) => pieceMetal(piece, run));
+			for (const { rest } of metal) expect(rest >= 0 && rest < run.precision).toBe(true);
 			const gaps = run.joint.kind === 'plate' ? divided.joints.map((joint) => joint.size) : [];
 			expect(add(sum(metal.map((each) => each.face)), ...gaps)).toBe(run.face);
 			const laps = run.joint.kind === 'lap' ? divided.joints.map((joint) => joint.size) : [];
