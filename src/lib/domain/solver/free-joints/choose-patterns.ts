@@ -15,7 +15,6 @@ const MOST_PATTERNS = 6000;
 export function choosePatterns(
 	free: FreeModel,
 	found: readonly FreePattern[],
-	target: number,
 	work: Work
 ): Slots | null {
 	const { model, runs } = free;
@@ -50,7 +49,6 @@ export function choosePatterns(
 		{ rows, columns },
 		{ timeLimitMs: work.left(), shouldStop: () => work.over(), seed: work.seed }
 	);
-	void target;
 	if (answer.values === null) return null;
 	return runs.map((_, r) =>
 		patterns.flatMap((pattern, p) =>

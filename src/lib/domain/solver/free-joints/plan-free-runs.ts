@@ -50,7 +50,7 @@ export function planFreeRuns(
 		relaxed.certificate
 	);
 	const boundCents = checked.costCents ?? 0;
-	const slots = choosePatterns(free, relaxed.patterns, boundCents, work);
+	const slots = choosePatterns(free, relaxed.patterns, work);
 	if (slots === null) return { lengths: null, boundCents };
 	const lengths = runs.map((one, r) => {
 		const inSteps = slots[r]!.map((units) => Math.floor((units * free.unit) / precision));
