@@ -189,6 +189,8 @@ for (const [width, scheme] of [
 	[1440, 'dark']
 ] as const) {
 	test(`people pages fit ${width} px in the ${scheme} theme`, async ({ page }) => {
+		// Nine pages are read by axe here; a busy machine takes its time.
+		test.setTimeout(240_000);
 		await page.setViewportSize({ width, height: 844 });
 		await page.emulateMedia({ colorScheme: scheme });
 		const errors = watchConsole(page);
