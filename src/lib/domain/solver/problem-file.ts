@@ -1,14 +1,9 @@
 import { describeProblem } from '../result';
 import type { SolveOptions } from './options';
 import { parseExactJson } from './problem-file/exact-json';
-import { costScale, planPart, type PartPlan } from './problem-file/part';
-import {
-	boundCents,
-	costCents,
-	printPart,
-	type FileAnswer,
-	type FileStatus
-} from './problem-file/print-part';
+import type { CostScale, PartPlan } from './problem-file/part';
+import { partKeys, planParts, type PlannedPart } from './problem-file/parts';
+import { costCents, printPart, type FileAnswer, type FileStatus } from './problem-file/print-part';
 import { Refused, refuse } from './problem-file/reader';
 import { readProblem, type FileProblem } from './problem-file/read-problem';
 
@@ -42,7 +37,7 @@ export function answerProblem(value: unknown, index: number, options: AnswerOpti
 	};
 	try {
 		const problem = readProblem(value, index);
-		return timed(answerGroups(problem, options));
+		return timed(answerParts(problem, options));
 	} catch (error) {
 		if (!(error instanceof Refused)) throw error;
 		const { where, received, accepted } = error.problem;
@@ -56,15 +51,7 @@ function nameOf(value: unknown, index: number): string {
 	return typeof name === 'string' && name !== '' ? name.slice(0, 200) : `problem ${index + 1}`;
 }
 
-function answerGroups(problem: FileProblem, options: AnswerOptions): FileAnswer {
-	const groups = groupsOf(problem);
-	const timeLimitMs = Math.min(problem.timeLimitMs, options.mostTimeMs ?? Infinity);
-	const solve = { ...options, seed: problem.seed, timeLimitMs: timeLimitMs / groups.length };
-	const parts = groups.map((group) => onlyGroup(problem, group, groups));
-	const scale = costScale(
-		problem,
-		parts.some((part) => part.stock.length > 1)
-	);
+function answerParts(problem: FileProblem, options: AnswerOptions): FileAnswer {
 	if (problem.jointCents > 0 && problem.stock.some((stock) => stock.cents === null)) {
 		refuse(
 			'Joint price',
@@ -72,45 +59,36 @@ function answerGroups(problem: FileProblem, options: AnswerOptions): FileAnswer 
 			'a price for a joint only beside prices for all stock'
 		);
 	}
-	const planned = parts.map((part) => planPart(part, scale, solve));
-	if (groups.length === 1 && groups[0] === null) {
-		const [part] = planned as [PartPlan];
-		return { ...printPart(problem, scale, part), checked: part.checked } as FileAnswer;
+	const keys = partKeys(problem);
+	const timeLimitMs = Math.min(problem.timeLimitMs, options.mostTimeMs ?? Infinity);
+	const limits = { seed: problem.seed, timeLimitMs: timeLimitMs / keys.length };
+	const { scale, parts } = planParts(problem, keys, { ...options, ...limits });
+	const [first] = parts;
+	if (keys.length === 1 && first!.key.group === null && first!.key.pool === null) {
+		const printed = printPart(first!.part, scale, first!.planned);
+		return { ...printed, checked: first!.planned.checked } as FileAnswer;
 	}
-	const printed = parts.map((part, i) => ({
-		group: groups[i],
-		...printPart(part, scale, planned[i]!),
-		checked: planned[i]!.checked
-	}));
-	return together(problem, scale.print, planned, printed);
+	return together(problem, scale.print, parts, printParts(problem, scale, parts));
 }
 
-/** The groups of a problem in the order in which pieces and runs name them; [null] without any. */
-function groupsOf(problem: FileProblem): (string | null)[] {
-	const named = [...problem.pieces, ...problem.runs].map((one) => one.group);
-	const groups = [...new Set(named)];
-	return groups.length > 0 ? groups : [null];
-}
+type Printed = FileAnswer & { readonly checked: boolean };
 
-/** The part of the problem that one group sees: its own stock, and unlimited stock without a group. */
-function onlyGroup(
+function printParts(
 	problem: FileProblem,
-	group: string | null,
-	groups: readonly (string | null)[]
-): FileProblem {
-	const own = (one: { readonly group: string | null }) => one.group === group;
-	const shared = problem.stock.find((stock) => stock.group === null && stock.available !== null);
-	if (groups.length > 1 && shared) {
-		const accepted = 'a group on stock that is limited, when pieces have groups';
-		refuse(`Group of ${shared.id}`, undefined, accepted);
-	}
-	return {
-		...problem,
-		stock: problem.stock.filter((stock) => own(stock) || stock.group === null),
-		offcuts: problem.offcuts.filter(own),
-		pieces: problem.pieces.filter(own),
-		runs: problem.runs.filter(own)
-	};
+	scale: CostScale,
+	parts: readonly PlannedPart[]
+): Printed[] {
+	return parts.map(({ key, part, planned, shared }) => {
+		const printed = printPart(part, scale, planned);
+		// Too little was left for it: that is no proof that nothing would do.
+		const starved = shared && printed.status === 'impossible';
+		return {
+			group: key.group,
+			...(problem.pool === 'job' ? {} : { [problem.pool]: key.pool }),
+			...(starved ? { ...printed, status: 'stopped' as const, reason: 'rule' } : printed),
+			checked: planned.checked
+		};
+	});
 }
 
 const WORST: readonly FileStatus[] = ['impossible', 'stopped', 'best found', 'proven'];
@@ -118,21 +96,34 @@ const WORST: readonly FileStatus[] = ['impossible', 'stopped', 'best found', 'pr
 function together(
 	problem: FileProblem,
 	print: (cents: number) => number,
-	planned: readonly PartPlan[],
-	printed: readonly (FileAnswer & { readonly checked: boolean })[]
+	parts: readonly PlannedPart[],
+	printed: readonly Printed[]
 ): FileAnswer {
-	const sum = (of: (part: PartPlan) => number) =>
-		planned.reduce((total, part) => total + of(part), 0);
-	const status = WORST.find((worst) => printed.some((part) => part.status === worst))!;
+	const sum = (of: (part: PlannedPart) => number) =>
+		parts.reduce((total, part) => total + of(part), 0);
+	const worst = WORST.find((one) => printed.some((part) => part.status === one))!;
 	const checked = printed.every((part) => part.checked);
-	if (status === 'impossible' || status === 'stopped') return { status, parts: printed, checked };
+	if (worst === 'impossible' || worst === 'stopped')
+		return { status: worst, parts: printed, checked };
+	const cost = sum(({ planned }) => costCents(problem, planned));
+	const bound = sum((part) => part.boundCents);
+	// Parts proven on what was left for them are together proven only where nothing better can be.
+	const open = parts.some((part) => part.shared) && bound < cost;
+	const status = open ? 'best found' : worst;
+	const reason = printed.find((part) => part.status === 'best found')?.reason ?? 'rule';
+	const gap = cost > 0 ? Number(((cost - bound) / cost).toFixed(6)) : 0;
 	return {
 		status,
-		cost: print(sum((part) => costCents(problem, part))),
-		lengthsUsed: sum((part) => part.plan.sticks.filter((s) => s.source.kind === 'stock').length),
-		joints: sum((part) => part.joints),
-		lowerBound: { cost: print(sum((part) => boundCents(problem, part))) },
+		...(status === 'best found' ? { reason } : {}),
+		cost: print(cost),
+		lengthsUsed: sum(({ planned }) => stockSticks(planned)),
+		joints: sum(({ planned }) => planned.joints),
+		lowerBound: { cost: print(bound) },
+		...(status === 'best found' ? { gap } : {}),
 		parts: printed,
 		checked
 	};
 }
+
+const stockSticks = ({ plan }: PartPlan): number =>
+	plan.sticks.filter((stick) => stick.source.kind === 'stock').length;

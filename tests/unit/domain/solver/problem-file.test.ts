@@ -171,8 +171,11 @@ describe('a problem that makes no sense is refused with a sentence', () => {
 		],
 		['a kerf over a piece', { ...BASE, kerf: 200 }, /^Kerf: .*N-1/],
 		['squaring over the stock', { ...BASE, squaring: { hook: 60, far: 60 } }, /^Squaring/],
-		['fixed sticks', { ...BASE, fixed: [{}] }, /^Fixed/],
-		['another pool', { ...BASE, pool: 'elevation' }, /^Pool/],
+		[
+			'another pool',
+			{ ...BASE, pool: 'floor' },
+			/^Pool: read "floor"; accepted is job, elevation or unit/
+		],
 		['a whole number of units', { ...BASE, unit: 'none', kerf: 0.5 }, /^Kerf/],
 		[
 			'a lap over the stock',
@@ -183,8 +186,7 @@ describe('a problem that makes no sense is refused with a sentence', () => {
 			'no joint',
 			{ ...BASE, runs: [{ mark: 'R', length: 300 }] },
 			/^Joint of R: nothing was entered/
-		],
-		['expansion', { ...BASE, runs: [{ mark: 'R', length: 9, expansion: {} }] }, /^Expansion of R/]
+		]
 	];
 	it.each(cases)('%s', async (_, problem, sentence) => {
 		const answered = await answer(problem);

@@ -6,7 +6,8 @@ import { canDivide, type Frame } from '../../takeoff/reach';
 import type { JointChoice, RunToDivide } from '../../takeoff/takeoff';
 import type { RunToPlace } from '../free-joints/plan-free-runs';
 import { printLength, refuse } from './reader';
-import type { FileProblem, FileRun } from './read-problem';
+import type { FileProblem } from './read-problem';
+import type { FileRun } from './read-run';
 
 /** One run as it is cut: pieces from the left with where each starts, and plates beside them. */
 export interface CutRun {

@@ -146,8 +146,13 @@ function placeFree(
 function longestUsable(problem: FileProblem): Length {
 	const squaring = problem.squaring.hook + problem.squaring.far;
 	const unlimited = problem.stock.filter((stock) => stock.available === null);
-	const any = unlimited.length > 0 ? unlimited : [...problem.stock, ...problem.offcuts];
-	return maximum(length(0), ...any.map((stick) => length(Math.max(0, stick.length - squaring))));
+	const rooms = (unlimited.length > 0 ? unlimited : problem.stock).map(
+		(stick) => stick.length - squaring
+	);
+	if (unlimited.length === 0) {
+		rooms.push(...problem.offcuts.map((one) => one.length - one.squaring.hook - one.squaring.far));
+	}
+	return maximum(length(0), ...rooms.map((room) => length(Math.max(0, room))));
 }
 
 function undivided(
@@ -233,7 +238,7 @@ export function toPacking(
 		})),
 		offcuts: problem.offcuts.map((offcut) => ({
 			...{ id: offcut.id, label: offcut.id, usable: offcut.length },
-			squaring: problem.squaring
+			squaring: offcut.squaring
 		})),
 		pieces: [
 			...problem.pieces.map((piece) => ({ ...piece, id: piece.mark })),

@@ -1,6 +1,8 @@
 import type { Length } from '../../lengths/length';
 import type { PlannedStick } from '../../plan/plan';
 import type { CostScale, PartPlan } from './part';
+import { printFixed } from './print-fixed';
+import { printRuns } from './print-runs';
 import { printLength } from './reader';
 import type { FileProblem } from './read-problem';
 
@@ -25,23 +27,24 @@ export function printPart(problem: FileProblem, scale: CostScale, part: PartPlan
 		return { status: 'impossible', reasons: reasonsOf(part, print) };
 	if (plan.status === 'stopped')
 		return { status: 'stopped', lowerBound: boundOf(problem, scale, part) };
+	const isFixed = new Set(problem.fixed.map((stick) => stick.id));
+	const others = plan.sticks.filter(({ source }) => {
+		return source.kind === 'stock' || !isFixed.has(source.id);
+	});
+	const fixed = problem.fixed.map((stick) => printFixed(problem, stick, plan.sticks, print));
 	return {
 		status: statusOf(part),
 		...(statusOf(part) === 'best found' ? { reason: reasonOf(part) } : {}),
 		cost: scale.print(costCents(problem, part)),
 		stockUsed: stockUsed(plan.sticks, print),
 		lengthsUsed: plan.sticks.filter((stick) => stick.source.kind === 'stock').length,
-		offcutsUsed: plan.sticks.filter((s) => s.source.kind === 'offcut').map((s) => s.source.id),
+		offcutsUsed: others.filter((s) => s.source.kind === 'offcut').map((s) => s.source.id),
 		joints: part.joints,
 		lowerBound: boundOf(problem, scale, part),
 		...(statusOf(part) === 'best found' ? { gap: gapOf(problem, part) } : {}),
-		runs: part.runs.map((run) => ({
-			mark: run.mark,
-			pieces: run.pieces.map((piece) => {
-				return { mark: piece.mark, length: print(piece.length), from: print(piece.from) };
-			})
-		})),
-		patterns: patternsOf(plan.sticks, print)
+		runs: printRuns(problem, part, print),
+		...(fixed.length > 0 ? { fixed } : {}),
+		patterns: patternsOf(others, print)
 	};
 }
 

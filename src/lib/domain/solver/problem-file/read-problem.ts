@@ -1,7 +1,11 @@
 import { inches, length, type Length } from '../../lengths/length';
-import type { Joint } from '../../takeoff/takeoff';
+import { readFixed, takeFixed, type FixedStick } from './fixed';
+import { intoSegments } from './expansion';
+import { readRun, type FileRun } from './read-run';
 import {
 	printLength,
+	readGroup,
+	readPoolOf,
 	readCents,
 	readFields,
 	readLength,
@@ -24,25 +28,21 @@ export interface FileOffcut {
 	readonly id: string;
 	readonly length: Length;
 	readonly group: string | null;
+	/** Elevation or unit whose pieces alone it may hold; null for an offcut that all may use. */
+	readonly pool: string | null;
+	/** Squaring that its ends still need. */
+	readonly squaring: { readonly hook: Length; readonly far: Length };
 }
 export interface FilePiece {
 	readonly mark: string;
 	readonly length: Length;
 	readonly count: number;
 	readonly group: string | null;
+	/** Elevation or unit that it is packed with; null where the whole job is one pool. */
+	readonly pool: string | null;
 }
-export type FileJoints = 'anywhere' | 'left' | 'right' | 'even';
-export interface FileRun {
-	readonly mark: string;
-	readonly length: Length;
-	readonly joint: Joint | null;
-	readonly minPiece: Length | null;
-	readonly maxPiece: Length | null;
-	readonly joints: FileJoints;
-	readonly keepOut: readonly (readonly [Length, Length])[];
-	readonly group: string | null;
-}
-
+/** What is packed together: everything, or the pieces of one elevation or of one unit. */
+export type FilePool = 'job' | 'elevation' | 'unit';
 /** A problem file, read and checked field by field; every default of SOLVER 1 filled in. */
 export interface FileProblem {
 	readonly name: string;
@@ -53,6 +53,9 @@ export interface FileProblem {
 	readonly offcuts: readonly FileOffcut[];
 	readonly pieces: readonly FilePiece[];
 	readonly runs: readonly FileRun[];
+	/** Sticks with cuts already made; their pieces are off the demand, their rest is among the offcuts. */
+	readonly fixed: readonly FixedStick[];
+	readonly pool: FilePool;
 	readonly precision: Length;
 	readonly keepOffcut: Length;
 	readonly jointCents: number;
@@ -70,27 +73,40 @@ const MOST_PIECES = 200_000;
 export function readProblem(value: unknown, index: number): FileProblem {
 	const fields = readFields(value, 'the problem', KEYS);
 	const unit = readUnit(fields.unit);
+	const pool = readPool(fields.pool);
+	const squaring = readSquaring(fields.squaring, unit);
+	const precision = readPrecision(fields.precision, unit);
+	const readDemand = (list: unknown, kind: string) =>
+		readList(list, `${kind}s`).map((one, i) => readPiece(one, i, unit, kind, pool));
+	const runs = readList(fields.runs, 'Runs').map((one, i) => readRun(one, i, unit, pool));
+	const segmented = intoSegments(runs, precision, unit);
 	const problem: FileProblem = {
+		...{ unit, pool, squaring, precision, runs: segmented.runs },
 		name: readText(fields.name, 'Name', `problem ${index + 1}`),
-		unit,
 		kerf: readLength(fields.kerf ?? 0, 'Kerf', unit),
-		squaring: readSquaring(fields.squaring, unit),
 		stock: readList(fields.stock, 'Stock').map((one, i) => readStock(one, i, unit)),
-		offcuts: readList(fields.offcuts, 'Offcuts').map((one, i) => readOffcut(one, i, unit)),
+		offcuts: readList(fields.offcuts, 'Offcuts').map((one, i) => {
+			return readOffcut(one, i, unit, squaring);
+		}),
 		pieces: [
-			...readList(fields.pieces, 'Pieces').map((one, i) => readPiece(one, i, unit, 'Piece')),
-			...readList(fields.spares, 'Spares').map((one, i) => readPiece(one, i, unit, 'Spare'))
+			...readDemand(fields.pieces, 'Piece'),
+			...readDemand(fields.spares, 'Spare'),
+			...segmented.covers
 		],
-		runs: readList(fields.runs, 'Runs').map((one, i) => readRun(one, i, unit)),
-		precision: readPrecision(fields.precision, unit),
+		fixed: readList(fields.fixed, 'Fixed').map((one, i) => readFixed(one, i, unit)),
 		keepOffcut: readKeepOffcut(fields.keepOffcut, unit),
 		jointCents: fields.jointPrice === undefined ? 0 : readCents(fields.jointPrice, 'Joint price'),
 		timeLimitMs: readWhole(fields.timeLimitMs, 'Time limit', [1, 600_000], 5000),
 		seed: readWhole(fields.seed, 'Seed', [0, 2 ** 31 - 1], 1)
 	};
-	refuseUnsupported(fields);
 	checkWhole(problem, fields);
-	return problem;
+	return takeFixed(problem);
+}
+
+function readPool(value: unknown): FilePool {
+	if (value === undefined) return 'job';
+	if (value === 'job' || value === 'elevation' || value === 'unit') return value;
+	return refuse('Pool', value, 'job, elevation or unit');
 }
 
 function readUnit(value: unknown): FileUnit {
@@ -118,9 +134,6 @@ function readKeepOffcut(value: unknown, unit: FileUnit): Length {
 	return unit === 'none' ? length(0) : inches(24);
 }
 
-const readGroup = (value: unknown, where: string): string | null =>
-	value === undefined || value === null ? null : readText(value, `Group of ${where}`, '');
-
 function readStock(value: unknown, index: number, unit: FileUnit): FileStock {
 	const where = `stock ${index + 1}`;
 	const fields = readFields(value, where, ['length', 'price', 'available', 'group']);
@@ -135,19 +148,31 @@ function readStock(value: unknown, index: number, unit: FileUnit): FileStock {
 	};
 }
 
-function readOffcut(value: unknown, index: number, unit: FileUnit): FileOffcut {
+function readOffcut(
+	value: unknown,
+	index: number,
+	unit: FileUnit,
+	squaring: FileProblem['squaring']
+): FileOffcut {
 	const where = `offcut ${index + 1}`;
 	const fields = readFields(value, where, ['id', 'length', 'group']);
 	return {
 		id: readText(fields.id, `Id of ${where}`, `R-${index + 1}`),
 		length: readLength(fields.length, `Length of ${where}`, unit, 'positive'),
-		group: readGroup(fields.group, where)
+		group: readGroup(fields.group, where),
+		...{ pool: null, squaring }
 	};
 }
 
-function readPiece(value: unknown, index: number, unit: FileUnit, kind: string): FilePiece {
+function readPiece(
+	value: unknown,
+	index: number,
+	unit: FileUnit,
+	kind: string,
+	pool: FilePool
+): FilePiece {
 	const fields = readFields(value, `${kind.toLowerCase()} ${index + 1}`, [
-		...['mark', 'length', 'count', 'group']
+		...['mark', 'length', 'count', 'group', 'elevation', 'unit']
 	]);
 	const mark = readText(
 		fields.mark,
@@ -158,86 +183,14 @@ function readPiece(value: unknown, index: number, unit: FileUnit, kind: string):
 		mark,
 		length: readLength(fields.length, `Length of ${mark}`, unit, 'positive'),
 		count: readWhole(fields.count, `Count of ${mark}`, [1, MOST_PIECES], 1),
-		group: readGroup(fields.group, mark)
+		group: readGroup(fields.group, mark),
+		pool: readPoolOf(fields, mark, pool)
 	};
-}
-
-const RUN_KEYS = [
-	...['mark', 'length', 'joint', 'minPiece', 'maxPiece', 'joints', 'keepOut', 'group', 'expansion']
-];
-
-function readRun(value: unknown, index: number, unit: FileUnit): FileRun {
-	const fields = readFields(value, `run ${index + 1}`, RUN_KEYS);
-	const mark = readText(fields.mark, `Mark of run ${index + 1}`, `Run ${index + 1}`);
-	if (fields.expansion !== undefined) {
-		const accepted = 'no expansion here: divide the run at its moving joints into separate runs';
-		refuse(`Expansion of ${mark}`, fields.expansion, accepted);
-	}
-	const optional = (of: unknown, name: string) =>
-		of === undefined ? null : readLength(of, `${name} of ${mark}`, unit, 'positive');
-	return {
-		mark,
-		length: readLength(fields.length, `Length of ${mark}`, unit, 'positive'),
-		joint: fields.joint === undefined ? null : readJoint(fields.joint, mark, unit),
-		minPiece:
-			fields.minPiece === undefined
-				? null
-				: readLength(fields.minPiece, `Minimum piece of ${mark}`, unit),
-		maxPiece: optional(fields.maxPiece, 'Piece limit'),
-		joints: readJoints(fields.joints, mark),
-		keepOut: readList(fields.keepOut, `Keep-out of ${mark}`).map((z) => readZone(z, mark, unit)),
-		group: readGroup(fields.group, mark)
-	};
-}
-
-function readJoints(value: unknown, mark: string): FileJoints {
-	if (value === undefined) return 'even';
-	if (value === 'anywhere' || value === 'left' || value === 'right' || value === 'even')
-		return value;
-	return refuse(`Joints of ${mark}`, value, 'anywhere, left, right or even');
-}
-
-function readJoint(value: unknown, mark: string, unit: FileUnit): Joint {
-	const fields = readFields(value, `the joint of ${mark}`, ['kind', 'overlap', 'gap', 'plate']);
-	if (fields.kind === 'lap') {
-		if (fields.gap !== undefined || fields.plate !== undefined) {
-			refuse(`Joint of ${mark}`, value, 'a lap with an overlap alone');
-		}
-		const overlap = readLength(fields.overlap, `Lap of ${mark}`, unit, 'positive');
-		return { kind: 'lap', overlap };
-	}
-	if (fields.kind !== 'plate') refuse(`Joint of ${mark}`, fields.kind, 'lap or plate');
-	if (fields.overlap !== undefined) refuse(`Joint of ${mark}`, value, 'a plate with gap and plate');
-	return {
-		kind: 'plate',
-		gap: readLength(fields.gap ?? 0, `Gap of ${mark}`, unit),
-		plate: readLength(fields.plate, `Plate of ${mark}`, unit, 'positive')
-	};
-}
-
-function readZone(value: unknown, mark: string, unit: FileUnit): readonly [Length, Length] {
-	const where = `Keep-out of ${mark}`;
-	const ends = readList(value, where);
-	if (ends.length !== 2) refuse(where, value, 'pairs of lengths from the left end: [from, to]');
-	const [from, to] = [readLength(ends[0], where, unit), readLength(ends[1], where, unit)];
-	return from <= to
-		? [from, to]
-		: refuse(where, value, 'a zone that ends right of where it starts');
-}
-
-function refuseUnsupported(fields: Readonly<Record<string, unknown>>): void {
-	if (fields.pool !== undefined && fields.pool !== 'job') {
-		refuse('Pool', fields.pool, 'job; give pieces of one elevation or unit the same group instead');
-	}
-	if (fields.fixed !== undefined && readList(fields.fixed, 'Fixed').length > 0) {
-		const accepted = 'no fixed sticks here: enter what is left of each as an offcut';
-		refuse('Fixed', fields.fixed, accepted);
-	}
 }
 
 /** What only the whole problem shows: prices all or none, marks and ids once, sizes that make sense. */
 function checkWhole(problem: FileProblem, fields: Readonly<Record<string, unknown>>): void {
-	if (fields.stock === undefined && fields.offcuts === undefined) {
+	if (fields.stock === undefined && fields.offcuts === undefined && problem.fixed.length === 0) {
 		refuse('Stock', undefined, 'at least one stock length or offcut');
 	}
 	if (fields.pieces === undefined && fields.runs === undefined) {
@@ -256,8 +209,8 @@ function checkWhole(problem: FileProblem, fields: Readonly<Record<string, unknow
 		[...problem.pieces, ...problem.runs].map((one) => one.mark)
 	);
 	checkOnce(
-		'Id of offcut',
-		problem.offcuts.map((one) => one.id)
+		problem.fixed.length > 0 ? 'Id of offcut or fixed stick' : 'Id of offcut',
+		[...problem.offcuts, ...problem.fixed].map((one) => one.id)
 	);
 	checkSizes(problem, fields);
 }

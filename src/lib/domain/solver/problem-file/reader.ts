@@ -131,3 +131,26 @@ export function printLength(of: Length, unit: FileUnit): string | number {
 	if (of === 0) return '0';
 	return formatLength(of, { units: unit === 'mm' ? 'metric' : 'imperial' });
 }
+
+/** The group that is never packed with another; null without one. */
+export const readGroup = (value: unknown, where: string): string | null =>
+	value === undefined || value === null ? null : readText(value, `Group of ${where}`, '');
+
+/** The elevation or unit of a piece or run: asked for where the pool is one, else read and left. */
+export function readPoolOf(
+	fields: Fields,
+	where: string,
+	pool: 'job' | 'elevation' | 'unit'
+): string | null {
+	const elevation = readPlace(fields.elevation, `Elevation of ${where}`);
+	const unit = readPlace(fields.unit, `Unit of ${where}`);
+	if (pool === 'job') return null;
+	const value = pool === 'elevation' ? elevation : unit;
+	if (value !== null) return value;
+	const name = pool === 'elevation' ? 'Elevation' : 'Unit';
+	const accepted = `text of 1 to 200 characters, since the pool is ${pool}`;
+	return refuse(`${name} of ${where}`, undefined, accepted);
+}
+
+const readPlace = (value: unknown, where: string): string | null =>
+	value === undefined ? null : readText(value, where, '');
