@@ -44,7 +44,8 @@ export const actions: Actions = {
 			return fail(400, { problems: edited.problems, entered, conflict: null });
 		if (edited.kind === 'conflict')
 			return fail(409, { problems: [], entered, conflict: edited.theirs as OrderView });
-		redirect(303, `/orders/${params.orderId}?done=saved`);
+		const then = form.get('then') === 'review' ? 'review' : 'done=saved';
+		redirect(303, `/orders/${params.orderId}?${then}`);
 	},
 	send: (event) => actOnOrder(event, sendOrder, 'sent'),
 	resend: (event) => actOnOrder(event, resendOrder, 'resent'),
