@@ -25,6 +25,8 @@ async function expectSound(page: Page): Promise<void> {
 }
 
 test('a purchaser buys: to buy, order, send, mailbox, receive', async ({ page }) => {
+	// Nine pages are looked at in two themes and three widths each.
+	test.setTimeout(300_000);
 	const errors = watchConsole(page);
 	await signIn(page, 'purchaser');
 
@@ -95,7 +97,8 @@ test('a purchaser buys: to buy, order, send, mailbox, receive', async ({ page })
 	await expect(page.getByText('Part received', { exact: true })).toBeVisible();
 	await expect(page.getByText('batch L-204')).toBeVisible();
 	await expectSound(page);
-	expect(errors()).toEqual([]);
+	// The browser notes the one form that was refused on purpose; nothing else.
+	expect(errors()).toEqual([expect.stringContaining('status of 400')]);
 });
 
 test('an installer has no orders, no prices and no mailbox', async ({ page }) => {
