@@ -13,6 +13,8 @@ export interface DemoRun {
 	/** Measured at the building and checked; otherwise the run is on hold. */
 	readonly verified: boolean;
 	readonly note?: string;
+	/** The run to its left carries the tab of their corner, so this end adds nothing. */
+	readonly cornerCarried?: boolean;
 }
 
 interface DemoCanopy {
@@ -165,10 +167,18 @@ function canopy(
 /** Seven runs close a canopy: head flashing, fascia on three sides, drip edge on three sides. */
 export function canopyRuns(unit: DemoCanopy, material: DemoElevation['material']): DemoRun[] {
 	const base = { unit: unit.mark, material, height: `10'-6"`, verified: unit.verified };
+	const carried = { ...base, cornerCarried: true };
 	const side = (profile: 'FA' | 'DE', level: number): DemoRun[] => [
 		{ ...base, profile, level, face: unit.leftSide, left: 'butt', right: 'corner-outside' },
-		{ ...base, profile, level, face: unit.width, left: 'corner-outside', right: 'corner-outside' },
-		{ ...base, profile, level, face: unit.rightSide, left: 'corner-outside', right: 'butt' }
+		{
+			...carried,
+			profile,
+			level,
+			face: unit.width,
+			left: 'corner-outside',
+			right: 'corner-outside'
+		},
+		{ ...carried, profile, level, face: unit.rightSide, left: 'corner-outside', right: 'butt' }
 	];
 	const head: DemoRun = {
 		...base,

@@ -1,3 +1,4 @@
+import { length } from '../../../domain/lengths/length';
 import type { Queryable } from '../../db/client';
 import { newId } from '../../ids';
 import { insertRows } from '../../queries/seed';
@@ -116,6 +117,7 @@ function seedRun(
 			faceTyped: face,
 			leftKind: left,
 			rightKind: right,
+			leftEnd: demo.cornerCarried ? { kind: left, allowance: length(0) } : null,
 			keepOut: [],
 			fit: left === 'butt' && right === 'butt' ? 'between' : 'over',
 			source: verified ? 'field' : 'drawing',
