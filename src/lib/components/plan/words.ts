@@ -63,6 +63,7 @@ const reasonWords = (reason: string): string =>
 	({
 		time: m.plan_reason_time(),
 		cancelled: m.plan_reason_cancelled(),
+		limit: m.plan_reason_limit(),
 		search: m.plan_reason_search(),
 		rule: m.plan_reason_rule()
 	})[reason] ?? '';

@@ -59,6 +59,12 @@ export interface PlannedStick {
 	readonly left: Length;
 }
 
+/**
+ * What ended the work on a plan that is not proven: the time allowed, someone who cancelled it, a fixed limit
+ * of work with time left, a floating-point search that found nothing better, or joints placed by rule.
+ */
+export type PlanReason = 'time' | 'cancelled' | 'limit' | 'search' | 'rule';
+
 export type PlanStatus = 'proven' | 'best found' | 'impossible' | 'stopped';
 
 /**
@@ -84,7 +90,7 @@ export interface PlanBound {
 export interface PackingPlan {
 	readonly status: PlanStatus;
 	/** Why a best-found plan was not proven. */
-	readonly reason?: 'time' | 'cancelled' | 'search' | 'rule';
+	readonly reason?: PlanReason;
 	readonly sticks: readonly PlannedStick[];
 	readonly costCents: number;
 	readonly bound: PlanBound;

@@ -5,6 +5,7 @@ import type {
 	PackingProblem,
 	PlanBound,
 	PlannedCut,
+	PlanReason,
 	PlannedStick
 } from '../plan/plan';
 import type { ProvenBound } from './certificate';
@@ -91,7 +92,7 @@ export function buildPlan(
 	model: Model,
 	uses: readonly Use[],
 	proven: ProvenBound | null,
-	reason: 'time' | 'cancelled' | 'search' | 'rule'
+	reason: PlanReason
 ): PackingPlan {
 	const costCents = costOf(model, uses);
 	const sticks = buildSticks(model, uses);

@@ -48,15 +48,16 @@ class Search {
 	#shortage = false;
 	readonly #table: Knapsack;
 	readonly #work: Work | null;
+	readonly #deadline: number;
 
 	constructor(
 		readonly problem: PackingProblem,
 		readonly model: Model,
 		readonly options: SolveOptions
 	) {
-		const deadline = options.clock() + options.timeLimitMs;
+		this.#deadline = options.clock() + options.timeLimitMs;
 		this.#table = new Knapsack(model);
-		this.#work = options.engine && startWork(options.engine, options, deadline);
+		this.#work = options.engine && startWork(options.engine, options, this.#deadline);
 		this.#bound = certify(model, materialPrices(model), this.#table);
 	}
 
@@ -95,11 +96,15 @@ class Search {
 			const shown = this.#shortage ? shortage(this.problem) : [];
 			return noPlan(this.problem, shown.length > 0 ? 'impossible' : 'stopped', shown, this.#bound);
 		}
-		const reason = this.#exhausted ? 'search' : cancelled ? 'cancelled' : 'time';
+		const ended = cancelled ? 'cancelled' : this.#late() ? 'time' : 'limit';
+		const reason = this.#exhausted ? 'search' : ended;
 		const keep = (this.problem.keepOffcut + this.problem.kerf) / this.model.unit;
 		const uses = polish(this.model, this.#best, keep);
 		return buildPlan(this.problem, this.model, uses, this.#bound, reason);
 	}
+
+	/** Whether the time allowed is over; if not, every step has come to an end of its own. */
+	#late = (): boolean => this.options.clock() >= this.#deadline;
 
 	#searchWith(master: Master, demand: readonly number[]): void {
 		master.add(this.#firstPatterns());

@@ -196,3 +196,25 @@ describe('a problem that makes no sense is refused with a sentence', () => {
 		expect(reason!.accepted).not.toBe('');
 	});
 });
+
+describe('the reason of a plan that is not proven', () => {
+	/** Every piece is a third and a little of the stock, so nothing closes this without a search. */
+	const HARD = {
+		...{ unit: 'none', kerf: 0, stock: [{ length: 1000, price: 7 }] },
+		pieces: Array.from({ length: 40 }, (_, i) => ({ length: 201 + 7 * i, count: 3 }))
+	};
+
+	it('is a limit of work, not time, without an engine and with time left', () => {
+		const answered = answerProblem(HARD, 0, { engine: null, clock: () => 0 });
+		expect(answered).toMatchObject({ status: 'best found', reason: 'limit', checked: true });
+	});
+
+	it('is time once the time is over, and cancelled when it was', async () => {
+		const engine = await highs();
+		let now = 0;
+		const late = answerProblem(HARD, 0, { engine, clock: () => (now += 10_000) });
+		expect(late).toMatchObject({ status: 'best found', reason: 'time' });
+		const options = { engine, clock: () => 0, shouldStop: () => true };
+		expect(answerProblem(HARD, 0, options)).toMatchObject({ reason: 'cancelled' });
+	});
+});

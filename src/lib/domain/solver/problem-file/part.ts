@@ -53,7 +53,11 @@ export interface PartPlan {
 	readonly jointCents: number;
 	readonly cannot: readonly CannotDivide[];
 	/** For runs whose joints the solver may place: what is proven of the metal, and how they were placed. */
-	readonly free: { readonly boundCents: number; readonly placed: 'rule' | 'search' } | null;
+	readonly free: {
+		readonly boundCents: number;
+		readonly placed: 'rule' | 'search';
+		readonly late: boolean;
+	} | null;
 	readonly checked: boolean;
 }
 
@@ -100,14 +104,16 @@ function placeAndSolve(
 		return { runs, packing, free, plan: solve(packing, { ...options, timeLimitMs: left() }) };
 	};
 	if (!open.includes(true)) return finish(byRule, null);
-	if (!options.engine || !lapped) return finish(byRule, { boundCents: 0, placed: 'rule' });
+	if (!options.engine || !lapped)
+		return finish(byRule, { boundCents: 0, placed: 'rule', late: false });
 	const work = startWork(options.engine, options, started + options.timeLimitMs * 0.7);
 	const found = placeFree(problem, scale, plans, byRule, open, work);
 	const boundCents = found?.boundCents ?? 0;
-	const searched = found?.runs ? finish(found.runs, { boundCents, placed: 'search' }) : null;
+	const late = work.over();
+	const searched = found?.runs ? finish(found.runs, { boundCents, placed: 'search', late }) : null;
 	const cost = searched ? withJoints(problem, searched) : Infinity;
 	if (searched && cost <= quickCost(problem, scale, byRule)) return searched;
-	const ruled = finish(byRule, { boundCents, placed: 'rule' });
+	const ruled = finish(byRule, { boundCents, placed: 'rule', late });
 	return withJoints(problem, ruled) < cost ? ruled : searched!;
 }
 

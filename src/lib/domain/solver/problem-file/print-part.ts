@@ -64,7 +64,8 @@ function statusOf(part: PartPlan): FileStatus {
 function reasonOf(part: PartPlan): string {
 	if (!part.checked) return 'check failed';
 	if (part.free?.placed === 'rule') return 'rule';
-	return part.plan.reason ?? 'time';
+	// The metal may be proven for these joints while others are not ruled out.
+	return part.plan.reason ?? (part.free?.late ? 'time' : 'limit');
 }
 
 export const costCents = (problem: FileProblem, part: PartPlan): number =>
