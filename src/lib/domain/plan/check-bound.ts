@@ -6,7 +6,8 @@ export interface CheckedBound {
 	readonly faults: readonly string[];
 }
 
-interface Limits {
+/** One stock length or offcut as a bound sees it. */
+export interface Limits {
 	readonly id: string;
 	readonly capacity: number;
 	readonly cost: number;
@@ -37,13 +38,36 @@ export function checkCertificate(
 	if (!isWhole(certificate.K) || certificate.K < 1) faults.push('The divisor K must be 1 or more.');
 	if (faults.length > 0) return { costCents: null, faults };
 	const lengths = [...demand.keys()];
-	const values = patternValues(problem, lengths, demand, prices, limits);
+	const best = bestWithin(problem, lengths, demand, prices, limits);
+	const values = limits.map(({ capacity, limit }) => (limit === 0 ? 0 : best(capacity)));
 	checkWeights(certificate.K, limits, values, weights, faults);
 	const total = numerator(demand, prices, limits, weights);
 	if (total !== BigInt(certificate.total))
 		faults.push('The total of the certificate does not add up.');
 	if (faults.length > 0) return { costCents: null, faults };
 	return { costCents: roundedUp(problem, total, certificate.K), faults };
+}
+
+/** A certificate with the table of its prices, for bounds on parts of the problem. */
+export interface CertificateTable {
+	readonly certificate: DualCertificate;
+	/** Sticks that can be had at all. */
+	readonly limits: readonly Limits[];
+	/** The greatest worth of pieces within a room, kerf included. */
+	readonly best: (room: number) => number;
+}
+
+/** The table of a certificate that proves something about the problem; null for any other. */
+export function certificateTable(
+	problem: PackingProblem,
+	certificate: DualCertificate
+): CertificateTable | null {
+	if (checkCertificate(problem, certificate).costCents === null) return null;
+	const demand = demandByLength(problem);
+	const prices = new Map<number, number>(certificate.u.map((one) => [one.length, one.value]));
+	const limits = readLimits(problem).filter((one) => one.limit !== 0);
+	const best = bestWithin(problem, [...demand.keys()], demand, prices, limits);
+	return { certificate, limits, best };
 }
 
 const isWhole = (value: number): boolean => Number.isSafeInteger(value) && value >= 0;
@@ -174,14 +198,14 @@ function commonStep(a: bigint, b: bigint): bigint {
 	return b === 0n ? a : commonStep(b, a % b);
 }
 
-/** V_s for every stick: the greatest Σ u·x of one pattern with x no more than asked for. */
-function patternValues(
+/** The greatest Σ u·x of pieces within a room, kerf included, with x no more than asked for. */
+function bestWithin(
 	problem: PackingProblem,
 	lengths: readonly number[],
 	demand: ReadonlyMap<number, number>,
 	prices: ReadonlyMap<number, number>,
 	limits: readonly Limits[]
-): number[] {
+): (room: number) => number {
 	const sizes = lengths.map((length) => length + problem.kerf);
 	let unit = sizes.reduce((a, b) => Number(commonStep(BigInt(a), BigInt(b))), 0) || 1;
 	const longest = Math.max(0, ...limits.filter((l) => l.limit !== 0).map((l) => l.capacity));
@@ -192,9 +216,7 @@ function patternValues(
 		const value = prices.get(lengths[i]!) ?? 0;
 		if (value > 0) addItem(best, Math.floor(size / unit), value, demand.get(lengths[i]!)!);
 	});
-	return limits.map(({ capacity, limit }) =>
-		limit === 0 || capacity < 0 ? 0 : best[Math.floor(capacity / unit)]!
-	);
+	return (room) => (room < 0 ? 0 : best[Math.floor(room / unit)]!);
 }
 
 /** Adds up to `count` copies of one item to the table, keeping in each residue class a sliding best. */

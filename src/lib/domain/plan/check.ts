@@ -1,4 +1,5 @@
 import { checkCertificate } from './check-bound';
+import { exploreTree } from './explore-tree';
 import type { PackingPlan, PackingProblem, PlannedStick, Verdict } from './plan';
 
 /**
@@ -131,13 +132,38 @@ function checkBound(problem: PackingProblem, plan: PackingPlan, faults: string[]
 	const { bound } = plan;
 	const checked = bound.certificate ? checkCertificate(problem, bound.certificate) : null;
 	if (checked) faults.push(...checked.faults);
-	const proven = checked?.costCents ?? null;
-	const stated = { certificate: proven, tree: null, search: plan.costCents, none: 0 }[bound.proof];
+	const certified = checked?.costCents ?? null;
+	const proven = bound.tree ? checkTree(problem, bound, faults) : certified;
+	const stated = {
+		certificate: certified,
+		tree: bound.tree ? proven : null,
+		search: plan.costCents,
+		none: 0
+	}[bound.proof];
+	if ((bound.proof === 'tree') !== (bound.tree !== undefined)) {
+		faults.push('A tree goes with a bound that says so, and only with that.');
+	}
+	if (bound.tree && !bound.certificate) faults.push('A tree stands beside a certificate.');
 	if (bound.costCents !== stated) faults.push('The stated bound is not what its proof gives.');
 	if (bound.lengths !== lengthsOf(problem, bound.costCents)) {
 		faults.push('The bound in lengths does not follow from the bound in cost.');
 	}
 	return proven;
+}
+
+/** The stated bound when searching every plan below it ends as the tree says; else null. */
+function checkTree(
+	problem: PackingProblem,
+	{ tree, costCents }: PackingPlan['bound'],
+	faults: string[]
+): number | null {
+	const whole = Number.isSafeInteger(costCents) && costCents > 0;
+	const branches = whole ? exploreTree(problem, tree!.certificates, costCents) : null;
+	if (branches === tree!.branches) return costCents;
+	faults.push(
+		branches === null ? 'The tree proves nothing.' : 'The tree does not have its branches.'
+	);
+	return null;
 }
 
 /** A bound in lengths exists where all stock has one price. */

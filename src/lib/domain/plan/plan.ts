@@ -79,12 +79,23 @@ export interface DualCertificate {
 	readonly w: readonly { readonly id: string; readonly value: number }[];
 }
 
+/**
+ * A proof by branching where no one certificate reaches the cost: every plan below the bound is tried, stick by
+ * stick, and each branch ends at one of these certificates, applied to what is left. `branches` counts them.
+ */
+export interface TreeProof {
+	readonly certificates: readonly DualCertificate[];
+	readonly branches: number;
+}
+
 export interface PlanBound {
 	readonly costCents: number;
 	/** Least number of lengths when all stock has one price; otherwise null. */
 	readonly lengths: number | null;
 	readonly proof: 'certificate' | 'tree' | 'search' | 'none';
 	readonly certificate: DualCertificate | null;
+	/** Beside the certificate where the proof is a tree. */
+	readonly tree?: TreeProof;
 }
 
 export interface PackingPlan {

@@ -72,7 +72,9 @@ export function planBound(
 	const prices = new Set(problem.stock.map((stock) => stock.priceCents));
 	const [price] = [...prices];
 	const lengths = prices.size === 1 && price! > 0 ? Math.ceil(costCents / price!) : null;
-	return { costCents, lengths, proof, certificate: proven?.certificate ?? null };
+	const certificate = proven?.certificate ?? null;
+	const tree = proof === 'tree' ? { tree: proven!.tree! } : {};
+	return { costCents, lengths, proof, certificate, ...tree };
 }
 
 /** An answer without a plan. */
@@ -98,7 +100,8 @@ export function buildPlan(
 	const sticks = buildSticks(model, uses);
 	const closed = proven !== null && proven.costCents >= costCents;
 	if (closed || reason === 'search') {
-		const bound = planBound(problem, costCents, closed ? 'certificate' : 'search', proven);
+		const proof = closed ? (proven.tree ? 'tree' : 'certificate') : 'search';
+		const bound = planBound(problem, costCents, proof, proven);
 		const status = closed ? 'proven' : 'best found';
 		return closed
 			? { status, sticks, costCents, bound, impossible: [] }

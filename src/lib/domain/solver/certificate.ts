@@ -1,4 +1,4 @@
-import type { DualCertificate } from '../plan/plan';
+import type { DualCertificate, TreeProof } from '../plan/plan';
 import { Knapsack } from './knapsack';
 import { totalDemand, type Bin, type Model } from './model';
 
@@ -6,6 +6,8 @@ import { totalDemand, type Bin, type Model } from './model';
 export interface ProvenBound {
 	readonly costCents: number;
 	readonly certificate: DualCertificate;
+	/** Where the bound is more than the certificate alone gives. */
+	readonly tree?: TreeProof;
 }
 
 /** Certificate values stay below this, so that every sum of the table is an exact double. */

@@ -1,3 +1,4 @@
+import { exploreTree } from '../plan/explore-tree';
 import type { PackingPlan, PackingProblem } from '../plan/plan';
 import { buildPlan, noPlan } from './build-plan';
 import { certify, materialPrices, type ProvenBound } from './certificate';
@@ -17,6 +18,8 @@ import { seeded, startWork, type Work } from './work';
 
 const FIRST_DIVES = 4;
 const MORE_DIVES = 24;
+/** Steps of a tree that is tried before the whole-number programme; after it the checker's own limit. */
+const FIRST_TREE = 200_000;
 
 /**
  * Packs the pieces into the fewest cents of stock that time allows and proves as much as it can.
@@ -118,7 +121,21 @@ class Search {
 		this.#dives(master, root, 0, FIRST_DIVES);
 		if (this.#best === null) this.#anyPlan(master);
 		if (this.#closed() || this.#work!.over()) return;
+		this.#growTree(FIRST_TREE);
+		if (this.#closed()) return;
 		this.#wholeNumbers(master, root);
+		if (!this.#closed() && !this.#work!.over()) this.#growTree();
+	}
+
+	/** Proves the plan in hand by trying every cheaper one, where that stays small; the checker does it again. */
+	#growTree(mostSteps?: number): void {
+		if (this.#best === null || this.#bound.costCents === 0) return;
+		const { certificate } = this.#bound;
+		const costCents = costOf(this.model, this.#best);
+		const limits = { ...(mostSteps ? { mostSteps } : {}), over: () => this.#work!.over() };
+		const branches = exploreTree(this.problem, [certificate], costCents, limits);
+		if (branches === null) return;
+		this.#bound = { costCents, certificate, tree: { certificates: [certificate], branches } };
 	}
 
 	/** Dives with different choices, each from the relaxation at the root. */

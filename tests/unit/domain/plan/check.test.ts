@@ -1,6 +1,7 @@
 import { beforeAll, describe, expect, it } from 'vitest';
 import { length } from '../../../../src/lib/domain/lengths/length';
 import { checkPlan } from '../../../../src/lib/domain/plan/check';
+import { exploreTree } from '../../../../src/lib/domain/plan/explore-tree';
 import { checkPlanGroups } from '../../../../src/lib/domain/plan/check-groups';
 import type { PackingPlan, PackingProblem } from '../../../../src/lib/domain/plan/plan';
 import { packing, solveNow } from '../../../support/packing';
@@ -55,6 +56,66 @@ const CHANGES: readonly [string, (value: number) => number][] = [
 	['a half more', (value) => value + 0.5],
 	['not a number', () => NaN]
 ];
+
+/** Two stocks at cent prices, as in the shop: the relaxation lies below the optimum, no certificate reaches it. */
+const BETWEEN = packing({
+	...{
+		kerf: 2,
+		stock: [
+			[1920, 1160],
+			[2304, 1425]
+		],
+		offcuts: [700]
+	},
+	pieces: [
+		[1811, 2],
+		[1402, 2],
+		[1290, 2],
+		[983, 3],
+		[911, 2],
+		[640, 2],
+		[377, 3]
+	]
+});
+
+describe('a proof by branching', () => {
+	let proven: PackingPlan;
+	beforeAll(async () => {
+		proven = await solveNow(BETWEEN);
+	});
+
+	it('closes what no certificate reaches, and the checker finds the same', () => {
+		expect(proven).toMatchObject({ status: 'proven', bound: { proof: 'tree' } });
+		expect(proven.bound.tree!.branches).toBeGreaterThan(0);
+		expect(checkPlan(BETWEEN, proven)).toMatchObject({ ok: true, proven: true, faults: [] });
+	});
+
+	it.each(CHANGES)('is refused with any one number changed: %s', (_, change) => {
+		const paths = numbersIn(proven.bound, ['bound']);
+		expect(paths.length).toBeGreaterThan(30);
+		const missed = paths.filter((path) => checkPlan(BETWEEN, changed(proven, path, change)).ok);
+		expect(missed).toEqual([]);
+	});
+
+	it('is refused without its certificates, without its branches, and under another name', () => {
+		const { bound } = proven;
+		const broken = [
+			{ ...bound, tree: { certificates: [], branches: bound.tree!.branches } },
+			{ ...bound, tree: undefined },
+			{ ...bound, proof: 'certificate' as const },
+			{ ...bound, proof: 'search' as const }
+		];
+		for (const one of broken) {
+			expect(checkPlan(BETWEEN, { ...proven, bound: one } as PackingPlan).ok).toBe(false);
+		}
+	});
+
+	it('finds no proof above the cost of a plan that exists', () => {
+		const { certificate } = proven.bound;
+		expect(exploreTree(BETWEEN, [certificate!], proven.costCents + 1)).toBeNull();
+		expect(exploreTree(BETWEEN, [certificate!], proven.costCents, { mostSteps: 3 })).toBeNull();
+	});
+});
 
 describe('the checker', () => {
 	it('accepts what the solver made, with its bound recomputed', () => {
