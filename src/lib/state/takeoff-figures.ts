@@ -112,7 +112,9 @@ export class TakeoffFigures {
 			lengths: totals.estimate.lengths,
 			costCents: totals.estimate.costCents,
 			proven: totals.estimate.proven,
-			problems: results.flatMap((one) => (one.ok ? [] : [describeProblem(one.problem)]))
+			problems: [
+				...new Set(results.flatMap((one) => (one.ok ? [] : [describeProblem(one.problem)])))
+			]
 		};
 	}
 }

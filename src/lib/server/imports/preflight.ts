@@ -30,7 +30,7 @@ function openZip(bytes: Buffer): Promise<ZipFile> {
 			else
 				reject(
 					new FileRefused(
-						`The file is damaged or not a workbook (${failure?.message ?? 'no zip'}); accepted are .xlsx, .csv and .tsv files.`
+						`The file is damaged or not a workbook; accepted are .xlsx, .csv and .tsv files.`
 					)
 				);
 		});

@@ -22,6 +22,10 @@ export const findImport = (db: Queryable, shopId: string, jobId: string, id: str
 		.where(and(eq(imports.shopId, shopId), eq(imports.jobId, jobId), eq(imports.id, id)))
 		.get();
 
+/** A join, not a subquery: only in a join are the columns written with their tables' names. */
+const countOf = (state: 'taken' | 'bad') =>
+	sql<number>`coalesce(sum(${importRows.state} = ${state}), 0)`;
+
 /** Imports of a job, newest first, with how many of their rows were taken and how many wait. */
 export const listImports = (db: Queryable, shopId: string, jobId: string) =>
 	db
@@ -30,11 +34,13 @@ export const listImports = (db: Queryable, shopId: string, jobId: string) =>
 			filename: imports.filename,
 			state: imports.state,
 			createdAt: imports.createdAt,
-			taken: sql<number>`(select count(*) from ${importRows} where ${importRows.importId} = ${imports.id} and ${importRows.state} = 'taken')`,
-			bad: sql<number>`(select count(*) from ${importRows} where ${importRows.importId} = ${imports.id} and ${importRows.state} = 'bad')`
+			taken: countOf('taken'),
+			bad: countOf('bad')
 		})
 		.from(imports)
+		.leftJoin(importRows, eq(importRows.importId, imports.id))
 		.where(and(eq(imports.shopId, shopId), eq(imports.jobId, jobId)))
+		.groupBy(imports.id)
 		.orderBy(desc(imports.createdAt))
 		.limit(50)
 		.all();

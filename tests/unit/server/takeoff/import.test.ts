@@ -114,6 +114,8 @@ describe('importing a takeoff', () => {
 		expect(open(id).bad).toHaveLength(2);
 		setRowAside(shop.as('estimator'), job, id, open(id).bad[0]!.id);
 		expect(open(id)).toMatchObject({ setAside: 1, taken: 3 });
+		const listed = getImports(shop.as('estimator'), job, id).imports;
+		expect(listed).toMatchObject([{ id, taken: 3, bad: 1 }]);
 		expect(takeImport(shop.as('estimator'), job, mapped(id)).kind).toBe('refused');
 	});
 
