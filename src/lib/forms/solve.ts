@@ -20,7 +20,25 @@ export const problemBody = z
 		pieces: z
 			.array(z.looseObject({ mark: z.string(), length, count: z.int().optional() }))
 			.optional(),
-		runs: z.array(z.looseObject({ mark: z.string(), length, joint: joint.optional() })).optional(),
+		runs: z
+			.array(
+				z.looseObject({
+					...{ mark: z.string(), length, joint: joint.optional() },
+					expansion: z
+						.object({ spacing: length, gap: length.optional(), cover: length.optional() })
+						.optional()
+				})
+			)
+			.optional(),
+		pool: z.enum(['job', 'elevation', 'unit']).optional(),
+		fixed: z
+			.array(
+				z.object({
+					...{ id: z.string().optional(), length },
+					cuts: z.array(z.object({ mark: z.string(), length }))
+				})
+			)
+			.optional(),
 		keepOffcut: length.optional(),
 		timeLimitMs: z.number().optional(),
 		seed: z.int().optional()

@@ -4,6 +4,7 @@ import type { DualCertificate, PackingProblem } from './plan';
 /** Steps of the search, so that it ends the same way whatever the clock. */
 const MOST_STEPS = 3_000_000;
 const MOST_SUMS = 2_000_000;
+const MOST_REMEMBERED = 200_000;
 
 /** Where a search gives up; the checker knows the default limit of steps alone. */
 export interface TreeLimits {
@@ -152,7 +153,7 @@ class Tree {
 		const key = `${this.#rest.join()}|${this.#sticks.map(({ left }) => left).join()}`;
 		const known = this.#cheapest.get(key);
 		if (known !== undefined && known <= spent) return true;
-		this.#cheapest.set(key, spent);
+		if (this.#cheapest.size < MOST_REMEMBERED) this.#cheapest.set(key, spent);
 		return false;
 	}
 

@@ -67,6 +67,17 @@ describe('pool', () => {
 		});
 	});
 
+	it('is proven where an offcut that one has taken could not have served the others', async () => {
+		const pieces = [piece('A', 50, 'north'), piece('B', 60, 'south')];
+		const joint = { kind: 'lap', overlap: 4 };
+		const runs = [{ mark: 'R', length: 146, joint, minPiece: 10, elevation: 'south' }];
+		const offcuts = [{ id: 'R', length: 50 }];
+		const problem = { ...BASE, pieces, runs, offcuts, pool: 'elevation' };
+		expect(await answer(problem)).toMatchObject({
+			...{ status: 'proven', cost: 15, lowerBound: { cost: 15 }, checked: true }
+		});
+	});
+
 	it('gives limited stock first to the elevation that cannot do without', async () => {
 		const stock = [
 			{ length: 100, price: 5 },

@@ -1,5 +1,6 @@
 import { estimate } from '../estimate';
 import type { SolveOptions } from '../options';
+import { solve } from '../solve';
 import { costScale, planPart, toPacking, type CostScale, type PartPlan } from './part';
 import { boundCents } from './print-part';
 import { refuse } from './reader';
@@ -95,7 +96,9 @@ function planInTurn(
 		const part = without(whole[i]!, gone);
 		const planned = planPart(part, scale, options);
 		const shared = part !== whole[i];
-		const bound = shared ? widerBound(whole[i]!, scale) : boundCents(problem, planned);
+		const bound = shared
+			? widerBound(whole[i]!, planned, scale, options)
+			: boundCents(problem, planned);
 		parts[i] = { key, part, planned, boundCents: bound, shared };
 		for (const { source } of planned.plan.sticks) {
 			gone.set(source.id, (gone.get(source.id) ?? 0) + 1);
@@ -119,6 +122,20 @@ function without(part: FileProblem, gone: ReadonlyMap<string, number>): FileProb
 	};
 }
 
-/** What the pieces of a part cost at least with all limited stock at hand; runs are left out of it. */
-const widerBound = (part: FileProblem, scale: CostScale): number =>
-	estimate(toPacking(part, scale, [])).boundCents;
+/**
+ * What a part costs at least with all limited stock at hand. Runs count where they are divided the same way
+ * then too: by rule, within a limit that unlimited stock sets.
+ */
+function widerBound(
+	part: FileProblem,
+	planned: PartPlan,
+	scale: CostScale,
+	options: SolveOptions
+): number {
+	const same = planned.free === null && part.stock.some((stock) => stock.available === null);
+	const packing = toPacking(part, scale, same ? planned.runs : []);
+	const { bound } = solve(packing, { ...options, timeLimitMs: options.timeLimitMs / 4 });
+	// What a search alone says is no proof.
+	const proven = bound.proof === 'search' ? estimate(packing).boundCents : bound.costCents;
+	return proven + planned.leastJoints * planned.jointCents;
+}
