@@ -38,6 +38,7 @@ export default defineConfig({
 		cwd: '../..',
 		url: `${baseURL}/api/health`,
 		timeout: 240_000,
+		reuseExistingServer: !process.env.CI,
 		env: {
 			PORT: String(PORT),
 			LAPWING_DATA: `test-results/data-${PORT}`,
