@@ -8,7 +8,7 @@ import { findImpossible, shortage } from './feasible';
 import { bestGreedy } from './greedy';
 import { Knapsack } from './knapsack';
 import { Master, type Relaxation } from './master';
-import { reduce, type Model } from './model';
+import { reduce, totalDemand, type Model } from './model';
 import type { SolveOptions, SolveProgress } from './options';
 import { costOf, lengthsOf, mergeUses, type Pattern, type Use } from './pattern';
 import { polish } from './polish';
@@ -20,6 +20,8 @@ const FIRST_DIVES = 4;
 const MORE_DIVES = 24;
 /** Steps of a tree that is tried before the whole-number programme; after it the checker's own limit. */
 const FIRST_TREE = 200_000;
+/** With more pieces than this a tree hardly ever stays small: the programme goes first. */
+const TREE_PIECES = 80;
 
 /**
  * Packs the pieces into the fewest cents of stock that time allows and proves as much as it can.
@@ -121,7 +123,7 @@ class Search {
 		this.#dives(master, root, 0, FIRST_DIVES);
 		if (this.#best === null) this.#anyPlan(master);
 		if (this.#closed() || this.#work!.over()) return;
-		this.#growTree(FIRST_TREE);
+		if (totalDemand(this.model) <= TREE_PIECES) this.#growTree(FIRST_TREE);
 		if (this.#closed()) return;
 		this.#wholeNumbers(master, root);
 		if (!this.#closed() && !this.#work!.over()) this.#growTree();
