@@ -10,8 +10,8 @@ export default defineConfig({
 	outputDir: '../../test-results',
 	workers: 1,
 	fullyParallel: false,
-	timeout: 60_000,
-	expect: { timeout: 10_000 },
+	timeout: 120_000,
+	expect: { timeout: 15_000 },
 	retries: process.env.CI ? 1 : 0,
 	reporter: process.env.E2E_JSON
 		? [['list'], ['json', { outputFile: process.env.E2E_JSON }]]
