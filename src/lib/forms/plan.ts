@@ -42,6 +42,17 @@ export const whatIfBody = z.strictObject({
 });
 export type WhatIfInput = z.output<typeof whatIfBody>;
 
+/** A whole number as typed; what is refused is named as the page names the field. */
+const wholeNumber = (name: string, from: number, to: number, accepted: string) =>
+	z.string().transform((typed, ctx) => {
+		const value = Number(typed);
+		if (/^\s*\d{1,9}\s*$/.test(typed) && value >= from && value <= to) return value;
+		const read = typed.trim() ? `read "${typed.slice(0, 60)}"` : 'nothing was entered';
+		const sentence = `${name}: ${read}; accepted is ${accepted}.`;
+		ctx.addIssue({ code: 'custom', params: { sentence } });
+		return z.NEVER;
+	});
+
 const ticked = z.literal('on').optional();
 const list = z.array(id).optional();
 
@@ -54,11 +65,13 @@ export const planForm = z
 		stock: list,
 		allElevations: ticked,
 		allStock: ticked,
-		seconds: z.coerce
-			.number('accepted is 1 to 120 seconds')
-			.int('accepted is whole seconds')
-			.min(1, 'accepted is 1 to 120 seconds')
-			.max(120, 'accepted is 1 to 120 seconds')
+		seconds: wholeNumber('Time allowed', 1, 120, 'whole seconds from 1 to 120')
+	})
+	.superRefine((form, ctx) => {
+		if (form.allStock || form.useOffcuts || form.stock?.length) return;
+		const sentence =
+			'Stock lengths allowed: none is ticked; accepted is at least one, or offcuts from the rack.';
+		ctx.addIssue({ code: 'custom', path: ['stockLengthIds'], params: { sentence } });
 	})
 	.transform((form) => ({
 		elevationIds: form.allElevations ? null : (form.elevations ?? []),
@@ -70,9 +83,5 @@ export const planForm = z
 	}));
 
 export const releaseToBuyForm = z.strictObject({
-	marginPercent: z.coerce
-		.number('accepted is a whole percentage from 0 to 50')
-		.int('accepted is a whole percentage from 0 to 50')
-		.min(0, 'accepted is a whole percentage from 0 to 50')
-		.max(50, 'accepted is a whole percentage from 0 to 50')
+	marginPercent: wholeNumber('Margin', 0, 50, 'a whole percentage from 0 to 50')
 });

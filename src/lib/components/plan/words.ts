@@ -43,16 +43,25 @@ export function verdictWords(group: GroupView, currency: string): string {
 
 const boundWords = (group: GroupView, currency: string): string => {
 	if (group.bound.proof === 'none') return m.plan_bound_none();
-	if (group.bound.lengths !== null) return m.plan_bound_lengths({ count: group.bound.lengths });
-	return group.costCents === null
-		? m.plan_bound_cost_hidden()
-		: m.plan_bound_cost({ cost: formatCents(group.bound.costCents, currency) });
+	const searched = group.bound.proof === 'search';
+	if (group.bound.lengths !== null && !searched)
+		return m.plan_bound_lengths({ count: group.bound.lengths });
+	if (group.costCents === null) return m.plan_bound_cost_hidden();
+	const cents = sureBound(group);
+	return cents === null
+		? m.plan_bound_none()
+		: m.plan_bound_cost({ cost: formatCents(cents, currency) });
 };
+
+/** A search's own value is evidence; what is said never to be undercut is the bound the checker recomputed. */
+const sureBound = ({ bound, verdict }: GroupView): number | null =>
+	bound.proof === 'search' ? verdict.boundCents : bound.costCents;
 
 export function gapText(group: GroupView): string {
 	const cost = group.verdict.costCents;
-	if (!cost) return '–';
-	return percentText((10_000 * (cost - group.bound.costCents)) / cost);
+	const bound = sureBound(group);
+	if (!cost || bound === null) return '–';
+	return percentText((10_000 * (cost - bound)) / cost);
 }
 
 /** Hundredths of a percent as text: `4.3 %`. */

@@ -14,6 +14,20 @@ function enteredText(form: FormData): Record<string, string> {
 	return entered;
 }
 
+/** A field's name as words, for a sentence that has none of its own: `new_password` is "New password". */
+function spoken(field: string): string {
+	if (field === 'email') return 'E-mail';
+	const words = field.replace(/_/g, ' ').replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`);
+	return words.charAt(0).toUpperCase() + words.slice(1);
+}
+
+const inWords = ({ field, sentence }: FieldProblem): FieldProblem => ({
+	field,
+	sentence: sentence.startsWith(`${field}: `)
+		? spoken(field) + sentence.slice(field.length)
+		: sentence
+});
+
 /** A posted form checked by a schema; a field named `name[]` becomes the array `name`. */
 export async function readForm<S extends z.ZodType>(
 	request: Request,
@@ -26,5 +40,5 @@ export async function readForm<S extends z.ZodType>(
 	const parsed = schema.safeParse(body);
 	const entered = enteredText(form);
 	if (parsed.success) return { ok: true, value: parsed.data, entered };
-	return { ok: false, problems: zodProblems(parsed.error, body), entered };
+	return { ok: false, problems: zodProblems(parsed.error, body).map(inWords), entered };
 }

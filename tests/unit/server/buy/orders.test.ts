@@ -149,6 +149,8 @@ describe('an order is sent', () => {
 		const text = ours.db.select().from(outbox).get()!.text;
 		expect(text).toContain(`14 lengths of DE Drip edge, 10'-0" (usable 9'-11"), girth 2"`);
 		expect(text).toContain('colour code SG-31');
+		// The sum of a line can be worked out from what stands on it: 110.00 + 4 × 11.60.
+		expect(text).toContain('1 × bundle of 10 at $110.00, 4 at $11.60 each: $156.40');
 		expect(text).toContain('Goods $236.60, freight $85.00, total $321.60');
 		const file = ours.db.select().from(outboxAttachments).get()!;
 		const book = new ExcelJS.Workbook();

@@ -1,5 +1,6 @@
 import { invariant } from '../../../domain/invariant';
 import { formatLength } from '../../../domain/lengths/format';
+import { priceOf } from '../../../domain/trade/buying';
 import { formatCents } from '../../../domain/trade/money';
 import type { Context } from '../../context';
 import {
@@ -86,6 +87,17 @@ const sheetData = (
 const colourOf = (line: OrderLine): string =>
 	[line.colourName, line.colourCode && `colour code ${line.colourCode}`].filter(Boolean).join(', ');
 
+/** How the line's sum comes about: bundles at their own price where the catalog's price holds, the rest singly. */
+function priceText(line: OrderLine, money: (cents: number) => string): string {
+	const { bundles, singles, cents } = priceOf(line.quantity, line);
+	const each = `${money(line.unitPriceCents)} each`;
+	const asPriced = line.unitPriceCents === line.priceCents && cents === line.lineCents;
+	if (!asPriced || bundles === 0 || line.bundlePriceCents === null)
+		return `${each}, ${money(line.lineCents)}`;
+	const bundle = `${bundles} × bundle of ${line.bundleSize} at ${money(line.bundlePriceCents)}`;
+	return `${bundle}${singles > 0 ? `, ${singles} at ${each}` : ''}: ${money(line.lineCents)}`;
+}
+
 function lineText(line: OrderLine, index: number, shop: ShopHead): string {
 	const length = (of: OrderLine['nominalNm']) => formatLength(of, { units: shop.units });
 	const material = [line.metal, line.gaugeLabel, line.finish, colourOf(line)].filter(Boolean);
@@ -93,7 +105,7 @@ function lineText(line: OrderLine, index: number, shop: ShopHead): string {
 	return [
 		`${index + 1}. ${line.quantity} lengths of ${line.profileCode} ${line.profileName}, ${length(line.nominalNm)} (usable ${length(line.usableNm)}), girth ${length(line.girthNm)}`,
 		`   ${material.join(', ')}`,
-		`   ${money(line.unitPriceCents)} each, ${money(line.lineCents)}`,
+		`   ${priceText(line, money)}`,
 		...(line.purpose ? [`   for ${line.purpose}`] : [])
 	].join('\n');
 }
