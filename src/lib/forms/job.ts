@@ -1,10 +1,14 @@
 import { z } from 'zod';
 import { isId } from './id';
 
+/** Control characters other than the line's own; they print as nothing and break spreadsheets. */
+const CONTROL = /[^\P{Cc}\t\n\r]/u;
+
 /** Text of at most so many characters, trimmed. */
 export const textOf = (most: number, least = 0) =>
 	z
 		.string({ error: `accepted is text of ${least} to ${most} characters` })
+		.refine((text) => !CONTROL.test(text), 'accepted is text without control characters')
 		.trim()
 		.min(least, `accepted is text of ${least} to ${most} characters`)
 		.max(most, `accepted is text of ${least} to ${most} characters`);

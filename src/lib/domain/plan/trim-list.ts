@@ -91,7 +91,7 @@ function trimRun(run: SnapshotRun, snapshot: ReleaseSnapshot): TrimRun {
 		revision: snapshot.revision,
 		profile: group ? `${profileCode} ${group.profile.name}` : profileCode,
 		material: group
-			? `${group.material.metal} ${group.material.gaugeLabel}, ${group.material.colourName}`
+			? `${`${group.material.metal} ${group.material.gaugeLabel}`.trim()}, ${group.material.colourName}`
 			: materialCode,
 		colourCode: group?.material.colourCode ?? '',
 		pieces: pieces.map((piece) => ({
