@@ -51,6 +51,8 @@ export interface StockOrderLine {
 	readonly unitPriceCents: number;
 	/** Price of the line as bought; bundles may make it differ from quantity × unit price. */
 	readonly lineCents: number;
+	/** How the sum comes about where it is not quantity × unit price, e.g. `1 × bundle of 10 at $132.00, 4 at …`. */
+	readonly pricing?: string;
 	/** Weight of one length. */
 	readonly grams: number;
 	readonly purpose: string;

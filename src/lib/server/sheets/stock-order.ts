@@ -75,6 +75,7 @@ function lineColumns(units: StockOrderData['shop']['units'], currency: string): 
 		{ header: m.sheets_weight({ unit: units === 'metric' ? 'kg' : 'lb' }), width: 9 },
 		{ header: m.sheets_unit_price({ currency }), width: 11 },
 		{ header: m.sheets_line_price({ currency }), width: 12 },
+		{ header: m.sheets_pricing(), width: 30 },
 		{ header: m.sheets_purpose(), width: 22 }
 	];
 }
@@ -93,6 +94,7 @@ const lineRow = (line: StockOrderLine, position: number, { shop }: StockOrderDat
 	weight(line.grams * line.quantity, shop.units),
 	money(line.unitPriceCents),
 	money(line.lineCents),
+	text(line.pricing ?? ''),
 	text(line.purpose)
 ];
 
@@ -105,6 +107,7 @@ const freightRow = ({ order }: StockOrderData): Cell[][] =>
 					text(m.sheets_freight()),
 					...Array<Cell>(12).fill(blank),
 					money(order.freightCents),
+					blank,
 					blank
 				]
 			];
@@ -124,6 +127,7 @@ function totalsOf({ shop, order, lines }: StockOrderData): Cell[] {
 		),
 		blank,
 		money(sum((line) => line.lineCents) + order.freightCents),
+		blank,
 		blank
 	];
 }

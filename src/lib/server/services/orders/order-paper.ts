@@ -19,7 +19,7 @@ type ShopHead = StockOrderData['shop'];
 const gramsOf = (line: OrderLine): number =>
 	Math.round((line.nominalNm / 1e9) * (line.girthNm / 1e9) * line.gramsPerSquareMetre);
 
-const sheetLine = (line: OrderLine): StockOrderLine => ({
+const sheetLine = (line: OrderLine, currency: string): StockOrderLine => ({
 	profileCode: line.profileCode,
 	profileName: line.profileName,
 	metal: line.metal,
@@ -33,6 +33,7 @@ const sheetLine = (line: OrderLine): StockOrderLine => ({
 	bundleSize: line.bundleSize,
 	unitPriceCents: line.unitPriceCents,
 	lineCents: line.lineCents,
+	pricing: bundlesText(line, (cents) => formatCents(cents, currency)) ?? undefined,
 	grams: gramsOf(line),
 	purpose: line.purpose
 });
@@ -80,23 +81,29 @@ const sheetData = (
 		jobs: jobsOf(lines),
 		freightCents: head.freightCents
 	},
-	lines: lines.map(sheetLine),
+	lines: lines.map((line) => sheetLine(line, shop.currency)),
 	profiles: drawings(lines)
 });
 
 const colourOf = (line: OrderLine): string =>
 	[line.colourName, line.colourCode && `colour code ${line.colourCode}`].filter(Boolean).join(', ');
 
-/** How the line's sum comes about: bundles at their own price where the catalog's price holds, the rest singly. */
-function priceText(line: OrderLine, money: (cents: number) => string): string {
+/** Bundles at their own price where the catalog's price holds, the rest singly; null when none is in the sum. */
+function bundlesText(line: OrderLine, money: (cents: number) => string): string | null {
 	const { bundles, singles, cents } = priceOf(line.quantity, line);
-	const each = `${money(line.unitPriceCents)} each`;
 	const asPriced = line.unitPriceCents === line.priceCents && cents === line.lineCents;
-	if (!asPriced || bundles === 0 || line.bundlePriceCents === null)
-		return `${each}, ${money(line.lineCents)}`;
+	if (!asPriced || bundles === 0 || line.bundlePriceCents === null) return null;
 	const bundle = `${bundles} × bundle of ${line.bundleSize} at ${money(line.bundlePriceCents)}`;
-	return `${bundle}${singles > 0 ? `, ${singles} at ${each}` : ''}: ${money(line.lineCents)}`;
+	return `${bundle}${singles > 0 ? `, ${singles} at ${money(line.unitPriceCents)} each` : ''}`;
 }
+
+/** How the line's sum comes about. */
+const priceText = (line: OrderLine, money: (cents: number) => string): string => {
+	const bundles = bundlesText(line, money);
+	return bundles
+		? `${bundles}: ${money(line.lineCents)}`
+		: `${money(line.unitPriceCents)} each, ${money(line.lineCents)}`;
+};
 
 function lineText(line: OrderLine, index: number, shop: ShopHead): string {
 	const length = (of: OrderLine['nominalNm']) => formatLength(of, { units: shop.units });
