@@ -84,3 +84,24 @@ test('the skip link and the dark theme work by keyboard', async ({ page }) => {
 	await expect(page.locator('#main')).toBeFocused();
 	await expectNoAxeFindings(page);
 });
+
+test('a form that the server does not answer keeps everything typed, and says so', async ({
+	page
+}) => {
+	await signIn(page, 'estimator');
+	await page.goto('/jobs/new');
+	await page.waitForLoadState('networkidle');
+	await page.getByLabel('Job number').fill('T-77');
+	await page.getByLabel('Name', { exact: true }).fill('Mill Weir');
+	await page.route('**/jobs/new*', (route) =>
+		route.request().method() === 'POST' ? route.abort() : route.continue()
+	);
+	await page.getByRole('button', { name: 'Make the job' }).click();
+	await expect(page.getByRole('alert')).toContainText('Not saved: the server did not answer.');
+	await expect(page.getByLabel('Job number')).toHaveValue('T-77');
+	await page.unroute('**/jobs/new*');
+	await page.context().clearCookies();
+	await page.getByRole('button', { name: 'Make the job' }).click();
+	await expect(page.getByRole('alert')).toContainText('you are signed out');
+	await expect(page.getByLabel('Name', { exact: true })).toHaveValue('Mill Weir');
+});
