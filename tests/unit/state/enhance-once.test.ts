@@ -11,7 +11,8 @@ vi.mock('$app/forms', () => ({
 
 const { enhance } = await import('../../../src/lib/state/enhance-once');
 const input = () => ({ cancel: vi.fn() });
-const answer = () => ({ update: vi.fn(async () => {}) });
+const SUCCESS = { type: 'success', status: 200 };
+const answer = (result: unknown = SUCCESS) => ({ result, update: vi.fn(async () => {}) });
 
 beforeEach(() => enhance({} as HTMLFormElement));
 
@@ -31,7 +32,7 @@ it('a second click while the first is on its way sends nothing', async () => {
 it('a page that fails to follow does not lock the form', async () => {
 	const done = await submit(input());
 	const update = vi.fn(async () => Promise.reject(new Error('no page')));
-	await expect(done!({ update })).rejects.toThrow('no page');
+	await expect(done!({ update, result: SUCCESS })).rejects.toThrow('no page');
 	const again = input();
 	await submit(again);
 	expect(again.cancel).not.toHaveBeenCalled();
@@ -49,4 +50,14 @@ it('a form that its own page holds back can be sent later', async () => {
 	const later = input();
 	await submit(later);
 	expect(later.cancel).not.toHaveBeenCalled();
+});
+
+it('a form that the server did not answer stays, and its page is not replaced', async () => {
+	const done = await submit(input());
+	const told = answer({ type: 'error', error: new TypeError('Failed to fetch') });
+	await done!(told);
+	expect(told.update).not.toHaveBeenCalled();
+	const again = input();
+	await submit(again);
+	expect(again.cancel).not.toHaveBeenCalled();
 });
